@@ -1,24 +1,24 @@
 import type { CheckCode, CheckResult, PathChoice } from '#shared/domain/checks/types.ts';
 import type { PhaseSpan } from '#shared/domain/facility/types.ts';
 import type {
-  CellFigures,
+  EstimateCell,
+  MeasurementKind,
   SlotEstimate,
-  ToleranceAsked,
+  Tolerance,
 } from '#shared/domain/hold-estimate/types.ts';
 
-export type WorkKind = 'settled' | 'screening';
 export type Grade = 'reported' | 'indicative';
 
 /** A request as the search sees it: one lot of equal cells at one set temperature. */
 export type SlotRequest = {
   readonly requestId: number | null;
-  readonly kind: WorkKind;
+  readonly kind: MeasurementKind;
   readonly grade: Grade;
   readonly cellTypeName: string;
   readonly cellCount: number;
-  readonly cell: CellFigures;
+  readonly cell: EstimateCell;
   readonly limits: CellLimits;
-  readonly tolerance: ToleranceAsked;
+  readonly tolerance: Tolerance;
   readonly screening: {
     readonly badToGoodRatio: number;
     readonly falseAlarm: number;

@@ -1,3 +1,4 @@
+import type { LoadPhase } from '#shared/domain/hold-estimate/types.ts';
 import type { Span } from '#shared/domain/intervals/types.ts';
 
 /**
@@ -100,21 +101,8 @@ export type StabilityFact = {
   readonly sensorPlace: string;
 };
 
-export const phaseNames = [
-  'connect',
-  'ramp',
-  'soak',
-  'match',
-  'hold',
-  'measure',
-  'return',
-  'wait',
-  'unload',
-] as const;
-export type PhaseName = (typeof phaseNames)[number];
-
 export type PhaseSpan = Span & {
-  readonly phase: PhaseName;
+  readonly phase: LoadPhase;
   readonly setTemperatureC: number;
 };
 
@@ -132,7 +120,7 @@ export type LoadMember = {
   readonly cells: number;
   readonly energyWh: number;
   /** Whole seconds a phase must last for this booking; connect and unload are for its own cells. */
-  readonly needsS: Readonly<Partial<Record<PhaseName, number>>>;
+  readonly needsS: Readonly<Partial<Record<LoadPhase, number>>>;
 };
 
 /** A span during which a channel × function × range is validly calibrated, and why it ends. */
