@@ -14,11 +14,6 @@ export {
 } from '#shared/domain/hold-estimate/types.ts';
 export { checkOutcomes, type CheckOutcome } from '#shared/domain/checks/types.ts';
 
-/** Days of the week as ISO 8601 numbers them, Monday first. */
-export const weekdays = ['mon', 'tue', 'wed', 'thu', 'fri', 'sat', 'sun'] as const;
-/** One of {@link weekdays}. */
-export type Weekday = (typeof weekdays)[number];
-
 /** Where a role grant comes from: the identity provider's claim or an administrator. */
 export const grantOrigins = ['claim', 'local'] as const;
 /** One of {@link grantOrigins}. */
