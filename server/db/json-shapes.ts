@@ -10,9 +10,11 @@ const openSpanSchema = z
 
 /** An empty list is a closed day. */
 export const dayHoursSchema = z.array(openSpanSchema);
+export type DayHours = z.infer<typeof dayHoursSchema>;
 
 /** Index 1 = Monday … 7 = Sunday; a day without entry is closed. */
 export const weekHoursSchema = z.partialRecord(
   z.enum(['1', '2', '3', '4', '5', '6', '7']),
   dayHoursSchema,
 );
+export type WeekHours = z.infer<typeof weekHoursSchema>;
