@@ -126,7 +126,7 @@ export type ProcessTimes = {
 };
 
 /**
- * What the runs have taught about observed hold / likely hold: normal-inverse-gamma parameters of
+ * What the runs have taught about observed hold / model hold: normal-inverse-gamma parameters of
  * y = ln(ratio), y ~ N(mu, s2), mu|s2 ~ N(mean, s2/kappa), s2 ~ InvGamma(shape, rate).
  */
 export type RatioPosterior = {
@@ -184,7 +184,11 @@ export type PhaseEstimate = {
 
 /** Lengths of the hold alone, s, before rounding. */
 export type HoldRange = {
+  /** What the physics gives; runs are compared with this: learned ratio = observed / model. */
+  readonly modelS: number;
+  /** Model × learned median ratio (the same as the model until runs have taught otherwise). */
   readonly likelyS: number;
+  /** Model × the ratio that is long enough with the policy's probability. */
   readonly safeS: number;
   /** Low class figures, everything else as likely. */
   readonly lowS: number;
