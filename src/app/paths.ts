@@ -39,6 +39,7 @@ export const paths = {
       `/${site}/metrology/calibrations/new${tag === undefined ? '' : `?tag=${tag}`}`,
   },
   settings: { pattern: `${siteRoot}/settings`, href: (site: string) => `/${site}/settings` },
+  find: { pattern: `${siteRoot}/find`, href: (site: string) => `/${site}/find` },
   help: { pattern: `${siteRoot}/help`, href: (site: string) => `/${site}/help` },
   marks: { pattern: `${siteRoot}/help/marks`, href: (site: string) => `/${site}/help/marks` },
 } as const;

@@ -16,6 +16,9 @@ let csrfToken = '';
 export function setCsrfToken(token: string): void {
   csrfToken = token;
 }
+export function currentCsrfToken(): string {
+  return csrfToken;
+}
 
 const scalar = z.union([z.string(), z.number(), z.boolean()]);
 const pathValues = z.record(z.string(), scalar);

@@ -1,0 +1,38 @@
+import { createBrowserRouter, type RouteObject } from 'react-router-dom';
+import { paths } from './paths.ts';
+import { FailedPage } from './routes/failed.tsx';
+import { Component as SiteLayout, NotFoundPage } from './routes/site-layout.tsx';
+
+type Screen = { Component: () => React.ReactNode };
+
+/** A screen is fetched when it is first opened; its failure stays inside the frame. */
+function screen(pattern: string, load: () => Promise<Screen>): RouteObject {
+  return {
+    path: pattern,
+    ErrorBoundary: FailedPage,
+    lazy: async () => {
+      const { Component } = await load();
+      return { Component };
+    },
+  };
+}
+
+const screens: RouteObject[] = [screen(paths.find.pattern, () => import('./routes/find.tsx'))];
+
+export function createRouter() {
+  return createBrowserRouter([
+    {
+      ErrorBoundary: FailedPage,
+      HydrateFallback: () => null,
+      children: [
+        screen(paths.signIn.pattern, () => import('./routes/sign-in.tsx')),
+        { path: '/', Component: SiteLayout },
+        {
+          Component: SiteLayout,
+          path: '/:site',
+          children: [...screens, { path: '*', Component: NotFoundPage }],
+        },
+      ],
+    },
+  ]);
+}
