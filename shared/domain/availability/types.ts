@@ -3,6 +3,7 @@ import type { PhaseSpan } from '#shared/domain/facility/types.ts';
 import type {
   EstimateCell,
   MeasurementKind,
+  RatioPosterior,
   SlotEstimate,
   Tolerance,
 } from '#shared/domain/hold-estimate/types.ts';
@@ -33,6 +34,8 @@ export type SlotRequest = {
   readonly cellsDamaged: boolean;
   /** Last charge or discharge of the least rested cell; null = not stated. */
   readonly restedSinceMs: number | null;
+  /** What runs of this cell type have taught about the hold; left out = the prior. */
+  readonly learnedRatios?: RatioPosterior | null;
   /** Checks lifted by a deviation in force. */
   readonly deviations: readonly {
     readonly id: number;
@@ -51,12 +54,14 @@ export type CellLimits = {
   /** Expected open-circuit voltage while held, if known. */
   readonly openCircuitVoltageV: number | null;
   readonly energyWh: number;
+  /** Percent. */
   readonly maxHoldStateOfCharge: number;
 };
 
 export type SearchOptions = {
   /** How many offers are wanted. */
   readonly options: number;
+  /** The instant by which a slot must have ended, epoch ms. */
   readonly horizonMs: number;
   readonly nowMs: number;
 };

@@ -1,6 +1,7 @@
 import type {
   Chamber,
   Facility,
+  FacilityIndex,
   Load,
   MeterChannel,
   MeterRange,
@@ -95,6 +96,8 @@ export type PathChoice = {
 /** Everything a check may look at for one booking in one place at one time. */
 export type PlacementFacts = {
   readonly facility: Facility;
+  /** Look-ups over the same facility. */
+  readonly index: FacilityIndex;
   readonly request: SlotRequest;
   readonly chamber: Chamber;
   /** The load it joins; null = a new one. */

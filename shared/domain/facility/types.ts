@@ -1,3 +1,4 @@
+import type { CalendarIndex } from '#shared/domain/calendar/types.ts';
 import type { LoadPhase } from '#shared/domain/hold-estimate/types.ts';
 import type { Span } from '#shared/domain/intervals/types.ts';
 
@@ -19,6 +20,25 @@ export type Facility = {
   readonly allocations: readonly TakenSpan[];
   /** Breakdowns, withdrawals, failed calibrations: not bookable, though bookings may lie over them. */
   readonly unavailabilities: readonly TakenSpan[];
+  /** Rooms whose energy is limited; chambers name their room. Left out = no room is limited. */
+  readonly rooms?: readonly Room[];
+};
+
+/** A room with a limit on the energy of all cells in its chambers together. */
+export type Room = { readonly name: string; readonly maxEnergyWh: number };
+
+/** A facility with the look-ups that checks and search need; made by `availability/build-index.ts`. */
+export type FacilityIndex = {
+  readonly facility: Facility;
+  readonly calendar: CalendarIndex;
+  readonly chambers: ReadonlyMap<number, Chamber>;
+  readonly sources: ReadonlyMap<number, SourceChannel>;
+  readonly meters: ReadonlyMap<number, MeterChannel>;
+  readonly positions: ReadonlyMap<number, Position>;
+  /** Bookings and planned outages by unit, in order of start. */
+  readonly taken: ReadonlyMap<number, readonly TakenSpan[]>;
+  /** Breakdowns and the like by unit, in order of start. */
+  readonly unavailable: ReadonlyMap<number, readonly TakenSpan[]>;
 };
 
 /** Working hours of a site in its own zone; minutes are wall-clock minutes after midnight. */
@@ -84,8 +104,13 @@ export type Chamber = {
 export type UnattendedPermission = {
   readonly maxTemperatureC: number;
   readonly maxHazard: number;
+  /** Percent. */
   readonly maxStateOfCharge: number;
   readonly contact: string;
+  /** When it holds; left out = always. */
+  readonly during?: Span;
+  /** The only cell type it is for; left out = any. */
+  readonly cellTypeName?: string;
 };
 
 /** One judged log of a chamber: what the chamber was shown to do at a temperature. */
