@@ -67,7 +67,10 @@ async function countApplied(client: pg.Client): Promise<number> {
   return counted.rows[0]?.count ?? 0;
 }
 
-/** Rights come before tables: whatever the queue's migrations create later is granted as well. */
+/**
+ * Rights come before tables: whatever the queue's migrations create later is granted as well. The
+ * queue makes a number sequence the first time each queue is used, hence the right to create.
+ */
 async function openQueueSchema(client: pg.Client): Promise<void> {
   const { rowCount } = await client.query('select from pg_namespace where nspname = $1', [
     queueSchema,
@@ -78,7 +81,7 @@ async function openQueueSchema(client: pg.Client): Promise<void> {
   await client.query(`
     begin;
     create schema ${queueSchema};
-    grant usage on schema ${queueSchema} to ${runtimeRole};
+    grant usage, create on schema ${queueSchema} to ${runtimeRole};
     alter default privileges in schema ${queueSchema}
       grant select, insert, update, delete on tables to ${runtimeRole};
     alter default privileges in schema ${queueSchema}

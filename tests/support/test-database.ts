@@ -85,11 +85,13 @@ async function ensureTemplate(admin: pg.Client, adminUrl: string): Promise<strin
   }
 }
 
-/** A change of any migration makes a new template, also on a cluster that is kept. */
+/** A change of what migrating does makes a new template, also on a cluster that is kept. */
 async function hashOfMigrations(): Promise<string> {
-  const folder = fileURLToPath(new URL('../../drizzle/', import.meta.url));
+  const root = fileURLToPath(new URL('../../', import.meta.url));
+  const folder = `${root}drizzle/`;
   const names = (await readdir(folder)).filter((name) => name.endsWith('.sql')).sort();
   const hash = createHash('sha256');
+  hash.update(await readFile(`${root}server/db/migrate-database.ts`));
   for (const name of names) {
     hash.update(name).update(await readFile(folder + name));
   }

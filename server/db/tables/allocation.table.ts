@@ -27,7 +27,9 @@ export const allocationsTable = pgTable(
       'allocation_has_one_reason',
       sql`num_nonnulls(${t.bookingId}, ${t.outageId}, ${t.otherWorkId}) = 1`,
     ),
-    index('allocation_window').using('gist', t.during),
+    index('allocation_window')
+      .using('gist', t.during)
+      .where(sql`${t.live}`),
     index('allocation_booking').on(t.bookingId),
     index('allocation_outage').on(t.outageId),
     index('allocation_other_work').on(t.otherWorkId),

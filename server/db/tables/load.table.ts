@@ -81,6 +81,5 @@ export const loadPhasesTable = pgTable(
       columns: [t.loadId, t.chamberId, t.strict],
       foreignColumns: [chamberLoadsTable.id, chamberLoadsTable.chamberId, chamberLoadsTable.strict],
     }).onUpdate('cascade'),
-    index('load_phase_window').using('gist', t.chamberId, t.during),
   ],
 );

@@ -48,6 +48,7 @@ export const requestsTable = pgTable(
     priority: text('priority', { enum: priorities }).notNull().default('normal'),
     submittedAt: instant('submitted_at'),
     declineReason: text('decline_reason'),
+    withdrawReason: text('withdraw_reason'),
     /** The engineer's preferred offer; it reserves nothing. */
     proposedOffer: jsonb('proposed_offer'),
     proposedAt: instant('proposed_at'),
