@@ -30,7 +30,8 @@ export type QuantityFormat = {
   readonly prefix?: Prefix | undefined;
 };
 
-function factorOf(prefix: Prefix): number {
+/** What a value in the base unit is divided by to stand before the prefix. */
+export function prefixFactor(prefix: Prefix): number {
   return prefixes.find((entry) => entry.symbol === prefix)?.factor ?? 1;
 }
 
@@ -38,7 +39,7 @@ function factorOf(prefix: Prefix): number {
 export function choosePrefix(value: number, preferred?: Prefix): Prefix {
   const size = Math.abs(value);
   if (preferred !== undefined) {
-    const inPreferred = size / factorOf(preferred);
+    const inPreferred = size / prefixFactor(preferred);
     if (size === 0 || (inPreferred >= 0.1 && inPreferred < 999.5)) {
       return preferred;
     }
@@ -63,7 +64,7 @@ function decimalsOf(scaled: number, factor: number, format: QuantityFormat): num
 /** Figure and unit apart, for a cell that draws the unit quieter than the figure. */
 export function splitQuantity(value: number, unit: string, format: QuantityFormat = {}): Figure {
   const prefix = choosePrefix(value, format.prefix);
-  const factor = factorOf(prefix);
+  const factor = prefixFactor(prefix);
   const scaled = value / factor;
   const decimals = decimalsOf(scaled, factor, format);
   return {
@@ -115,7 +116,7 @@ export function formatPercent(share: number, decimals = 0): string {
 /** `12.34 ± 0.56 µA`: one prefix for both, two digits of the uncertainty. */
 export function formatWithUncertainty(value: number, uncertainty: number, unit: string): string {
   const prefix = choosePrefix(Math.max(Math.abs(value), uncertainty));
-  const factor = factorOf(prefix);
+  const factor = prefixFactor(prefix);
   const decimals = decimalsForUncertainty(uncertainty / factor);
   const figure = formatNumber(value / factor, { decimals });
   const spread = formatNumber(uncertainty / factor, { decimals });

@@ -2,7 +2,8 @@ import { drawings } from './en/drawings.ts';
 import { gallery } from './en/gallery.ts';
 import { layout } from './en/layout.ts';
 import { session } from './en/session.ts';
+import { shell } from './en/shell.ts';
 import { ui } from './en/ui.ts';
 
 /** Every word the client shows; a feature adds one file in `en/` and one line here. */
-export const en = { drawings, gallery, layout, session, ui } as const;
+export const en = { drawings, gallery, layout, session, shell, ui } as const;
