@@ -120,7 +120,8 @@ function findLimit(
   worked: Worked,
   computed: Extract<HoldComputation, { outcome: 'ok' }>,
 ): HoldLimit {
-  if (worked.measure.noiseRuleS > Math.max(computed.holdS, 3600)) {
+  const { measureS, noiseRuleS } = worked.measure;
+  if (noiseRuleS >= measureS && noiseRuleS > computed.holdS) {
     return 'noise';
   }
   if (computed.holdS === 0) {
