@@ -75,6 +75,16 @@ function HourFoot(props: {
   );
 }
 
+/** Whether the first step is long enough to carry its words. */
+function startRoom(points: readonly { x: number }[], needed: number): boolean {
+  const next = points.find((point) => point.x > 0);
+  return next !== undefined && next.x > needed;
+}
+
+function countAt(steps: readonly TideStep[], ms: number): number {
+  return steps.filter((step) => step.atMs <= ms).at(-1)?.taken ?? 0;
+}
+
 /** The day at a site: positions taken (dashed after now), doors, staffed hours below. */
 export function DayTide(props: {
   window: TimeWindow;
@@ -94,8 +104,14 @@ export function DayTide(props: {
   const points = tidePoints(props.steps, props.window, width, y);
   const line = linePath(points);
   const now = Math.min(width, Math.max(0, timeScale(props.window, width)(props.nowMs)));
-  const taken = props.steps.filter((step) => step.atMs <= props.nowMs).at(-1)?.taken ?? 0;
   const first = points[0];
+  const last = points.at(-1);
+  const startCount = countAt(props.steps, props.window.startMs);
+  const longText = t.drawings.positionsTaken(startCount, props.positions);
+  const startText = startRoom(points, 12 + longText.length * 5.9) ? longText : `${startCount}`;
+  const endCount = countAt(props.steps, props.window.endMs);
+  const isLevelWithDoors = first !== undefined && Math.abs(first.y - 6 - 28) < 11;
+  const reserved = isLevelWithDoors ? [[0, 12 + startText.length * 5.9] as const] : [];
   return (
     <div className="mp-drawing" ref={ref}>
       <svg width={width} height="112" role="img" aria-label={props.label}>
@@ -109,14 +125,19 @@ export function DayTide(props: {
         </g>
         <path d={`M0 ${base}H${width}`} stroke="var(--ink)" strokeWidth="1.5" />
         <HourFoot window={props.window} zone={props.zone} width={width} staffed={props.staffed} />
-        {placeDoors(props.doors, props.window, width).map((door) => (
+        {placeDoors(props.doors, props.window, width, reserved).map((door) => (
           <Door key={door.x} door={door} />
         ))}
         <Now x={now} />
-        {first === undefined ? null : (
-          <text x="6" y={first.y - 6} className="mp-axis-word mp-halo">
-            {t.drawings.positionsTaken(taken, props.positions)}
-          </text>
+        {first === undefined || last === undefined ? null : (
+          <>
+            <text x="6" y={first.y - 6} className="mp-axis-word mp-halo">
+              {startText}
+            </text>
+            <text x={width - 6} y={last.y - 6} textAnchor="end" className="mp-axis-word mp-halo">
+              {endCount}
+            </text>
+          </>
         )}
       </svg>
     </div>

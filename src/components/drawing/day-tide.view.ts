@@ -24,14 +24,18 @@ export type PlacedDoor = {
 
 const letter = 5.9;
 
-/** Door uprights with their words left or right of them, or none where neither side is free. */
+/**
+ * Door uprights with their words left or right of them, or none where neither side is free;
+ * `reserved` spans are already written on.
+ */
 export function placeDoors(
   doors: readonly DoorEvent[],
   window: TimeWindow,
   width: number,
+  reserved: readonly (readonly [number, number])[] = [],
 ): readonly PlacedDoor[] {
   const x = timeScale(window, width);
-  const taken: [number, number][] = [];
+  const taken: (readonly [number, number])[] = [...reserved];
   const uprights = doors.map((door) => x(door.atMs));
   const isFree = (from: number, to: number) =>
     from >= 0 &&
@@ -42,8 +46,8 @@ export function placeDoors(
     const at = uprights[index] ?? 0;
     const length = door.label.length * letter;
     const sides = [
-      { side: 'left' as const, from: at - 8 - length, to: at - 4 },
-      { side: 'right' as const, from: at + 4, to: at + 8 + length },
+      { side: 'left' as const, from: at - 12 - length, to: at - 4 },
+      { side: 'right' as const, from: at + 4, to: at + 12 + length },
     ];
     const free = sides.find(({ from, to }) => isFree(from, to));
     if (free !== undefined) {

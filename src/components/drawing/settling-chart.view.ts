@@ -91,7 +91,7 @@ export function layOutSettling(data: SettlingData, width: number, height: number
 
 function currentTicks(low: number, high: number, y: Scale, prefix: Prefix) {
   const factor = prefixFactor(prefix);
-  const ticks = niceTicks(low / factor, high / factor, 4);
+  const ticks = niceTicks(low / factor, high / factor, 5);
   const step = Math.abs((ticks[1] ?? 1) - (ticks[0] ?? 0));
   const decimals = step >= 1 ? 0 : Math.ceil(-Math.log10(step));
   return ticks.map((value) => ({

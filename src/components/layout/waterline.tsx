@@ -85,14 +85,15 @@ export function Waterline(props: { siteName: string; clock: string; vessels: rea
       <ul className={props.vessels.length > 12 ? 'mp-waterline-many' : undefined}>
         {props.vessels.map((vessel) => (
           <li key={vessel.tag}>
-            <Link to={vessel.href} aria-label={vessel.sentence} title={vessel.sentence}>
+            <Link to={vessel.href} title={vessel.sentence}>
               <Water vessel={vessel} />
-              <span className="mp-vessel-words" aria-hidden="true">
+              <span className="mp-vessel-words">
                 <span>
                   <b>{vessel.tag}</b> {temperatureWord(vessel)}
                 </span>
                 <span>{endWord(vessel)}</span>
               </span>
+              <span className="mp-hidden">{vessel.sentence}</span>
             </Link>
           </li>
         ))}

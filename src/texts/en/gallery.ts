@@ -80,7 +80,7 @@ export const gallery = {
     caution:
       'An illustration with round figures: 100 µA leakage, a time constant of one hour, a start 150 µA low.',
     summary:
-      'The current enters the settled window of 90 to 110 µA after 2 h 43 min and safely after 3 h 30 min.',
+      'The current enters the settled window of 90 to 110 µA after 2 h 42 min and safely after 3 h 30 min.',
     curve: 'measured current',
     target: 'settled: 90 to 110 µA',
     high: 'predicted, source starts high',

@@ -3,6 +3,7 @@ import { PhaseFigure } from '#src/components/drawing/phase-figure.tsx';
 import { AllowanceGauge, RowGauge } from '#src/components/drawing/row-gauge.tsx';
 import { SettlingChart } from '#src/components/drawing/settling-chart.tsx';
 import { TideLine } from '#src/components/drawing/tide-line.tsx';
+import { useElementWidth } from '#src/hooks/use-element-width.ts';
 import { Section } from '#src/components/layout/page.tsx';
 import { State } from '#src/components/ui/state.tsx';
 import { Table } from '#src/components/ui/table.tsx';
@@ -56,6 +57,7 @@ export function BookingKey() {
           rows={barRows}
           rowKey={(row) => row.key}
           middle
+          stack
         />
       </div>
     </Section>
@@ -65,12 +67,13 @@ export function BookingKey() {
 const dayMs = 86_400_000;
 
 export function ChamberKey() {
+  const [ref, width] = useElementWidth<HTMLDivElement>(900);
   return (
     <Section title={t.gallery.chamber.title} note={t.gallery.chamber.note}>
-      <div className="overflow-hidden">
+      <div className="max-w-[900px]" ref={ref}>
         <TideLine
           window={{ startMs: 0, endMs: 7 * dayMs }}
-          width={900}
+          width={width}
           positions={8}
           steps={[
             { atMs: 0, taken: 4 },
@@ -140,6 +143,7 @@ export function GaugeKey() {
           rows={gaugeLines}
           rowKey={(row) => row.key}
           middle
+          stack
         />
       </div>
     </Section>
