@@ -1,25 +1,34 @@
+import type { StabilityFact } from '#shared/domain/facility/types.ts';
 import { layCellTypes } from './cell-types.ts';
 import { fillCellStock, openCellStock } from './cells.ts';
 import { layChannels } from './channel-plan.ts';
-import { createContext, known, type DemoContext } from './demo-context.ts';
+import { createContext, type DemoContext } from './demo-context.ts';
 import type { DemoRows } from './demo-rows.ts';
 import { openRegister, supportPlans } from './instruments.ts';
 import { layCalibrations } from './metrology.ts';
 import { openOccupancy } from './occupancy.ts';
 import { layOtherWork } from './other-work.ts';
+import { layOpenRequests, type WishedRequests } from './open-requests.ts';
 import { layOutages } from './outages.ts';
 import { layPeople } from './people.ts';
 import { planLoads } from './plan-loads.ts';
 import { layProjects } from './projects.ts';
 import { laySites } from './sites.ts';
 import { layStability } from './stability.ts';
-import { layChambers, type DemoPath } from './wiring.ts';
+import { layChambers, type DemoChamber } from './wiring.ts';
 import { writeWork } from './write-work.ts';
 
 export const defaultDemoSeed = 20_260_616;
 
+export type Demo = {
+  readonly rows: DemoRows;
+  /** The moment it is seen from. */
+  readonly nowMs: number;
+  readonly wished: WishedRequests;
+};
+
 /** Builds every row of the demo; the same seed and moment give the same rows. */
-export function buildDemo(input: { readonly seed: number; readonly nowMs: number }): DemoRows {
+export function buildDemo(input: { readonly seed: number; readonly nowMs: number }): Demo {
   const context = createContext(input);
   const sites = laySites(context);
   const people = layPeople(context, { larkfen: sites.larkfen.id, otterholm: sites.otterholm.id });
@@ -44,18 +53,43 @@ export function buildDemo(input: { readonly seed: number; readonly nowMs: number
       batches: stock.batches,
       occupancy,
       dueDays,
-      driftOf: driftsOf(context),
-      risksLeft: { count: 9 },
+      stabilityOf: stabilityIn(context),
+      risksLeft: new Map([
+        ['M07', 2],
+        ['S08', 1],
+        ['S02', 1],
+        ['C09', 2],
+        ['M11', 1],
+      ]),
     },
     { chambers, sites },
   );
   writeWork({ context, sites, people, dueDays, dice: context.diceFor('work') }, loads);
-  return context.rows;
+  const wished = layOpenRequests({ context, stock, sites, people });
+  return { rows: context.rows, nowMs: context.nowMs, wished };
 }
 
-function driftsOf(context: DemoContext): (path: DemoPath) => number {
-  const drifts = new Map(
-    context.rows.sourceSpecs.map((row) => [row.instrumentId, row.stabilityVPerH ?? 0]),
-  );
-  return (path) => known(drifts, path.source.instrument.id);
+/** The newest judged log by chamber and set temperature. */
+function stabilityIn(
+  context: DemoContext,
+): (chamber: DemoChamber, setC: number) => StabilityFact | undefined {
+  const newest = new Map<string, StabilityFact>();
+  for (const row of context.rows.assessments) {
+    const assessedAtMs = row.logToAt?.getTime() ?? 0;
+    const key = `${row.chamberId} ${row.setTempMdegc}`;
+    if (assessedAtMs > (newest.get(key)?.assessedAtMs ?? 0)) {
+      newest.set(key, {
+        id: row.id ?? 0,
+        setTemperatureC: row.setTempMdegc / 1000,
+        assessedAtMs,
+        hoursLogged: row.hoursLogged,
+        driftKPerH: row.driftKPerH,
+        halfBandK: row.halfBandK,
+        periodS: row.periodS ?? null,
+        resolutionK: row.resolutionK,
+        sensorPlace: row.sensorPlace,
+      });
+    }
+  }
+  return (chamber, setC) => newest.get(`${chamber.instrument.id} ${setC * 1000}`);
 }

@@ -1,25 +1,22 @@
+import type { MeterRange } from '#shared/domain/facility/types.ts';
 import type { DemoContext } from './demo-context.ts';
 import { stamped } from './demo-context.ts';
 import { dayMs } from './demo-days.ts';
 import type { DemoInstrument, InstrumentPlan, Register } from './instruments.ts';
 import type { SiteKey } from './sites.ts';
 
-export type DemoRange = {
-  readonly id: number;
-  readonly fullScaleA: number;
-  readonly resolutionA: number;
-  readonly noiseA: number;
-  readonly burdenOhm: number | null;
-  readonly burdenInsideLoop: boolean | null;
-  readonly sampleIntervalS: number;
-};
+export type DemoRange = MeterRange;
 export type DemoChannel = {
   readonly unitId: number;
   readonly label: string;
   readonly instrument: DemoInstrument;
   readonly sourceOutputOhm: number;
+  readonly stabilityVPerH: number;
   readonly ranges: readonly DemoRange[];
 };
+type SourceFigures = Pick<DemoChannel, 'sourceOutputOhm' | 'stabilityVPerH'>;
+const noSource: SourceFigures = { sourceOutputOhm: 0, stabilityVPerH: 0 };
+
 /** A source and a meter channel that stand side by side for a panel to take. */
 export type WirePair = { readonly source: DemoChannel; readonly meter: DemoChannel };
 
@@ -63,21 +60,22 @@ export function layChannels(
     return { channelId, unitId };
   }
 
-  function specifySource(instrument: DemoInstrument): number {
+  function specifySource(instrument: DemoInstrument): SourceFigures {
     const outputOhm = dice.pick([0.001, 0.002, 0.002]);
-    const quiet = Math.round(dice.between(5, 20)) * 1e-8;
+    const quiet = Math.round(dice.between(5, 20)) / 1e8;
+    const stabilityVPerH = driftingSources[instrument.tag] ?? quiet;
     context.rows.sourceSpecs.push({
       id: context.number('sourceSpecs'),
       instrumentId: instrument.id,
       minV: 0,
       maxV: 6,
-      stabilityVPerH: driftingSources[instrument.tag] ?? quiet,
+      stabilityVPerH,
       noiseV: dice.pick([2e-7, 3e-7, 5e-7]),
       outputOhm,
       tempcoVPerK: dice.pick([5e-7, 8e-7, 1e-6]),
       ...entered,
     });
-    return outputOhm;
+    return { sourceOutputOhm: outputOhm, stabilityVPerH };
   }
 
   function specifyRanges(instrument: DemoInstrument): DemoRange[] {
@@ -89,26 +87,23 @@ export function layChannels(
         burdenOhm: isKnown ? line.burdenOhm : null,
         burdenInsideLoop: isKnown ? true : null,
         sampleIntervalS: 10,
-      };
-      context.rows.meterRanges.push({
-        ...range,
-        instrumentId: instrument.id,
         accuracyPpmReading: 300,
         accuracyPpmRange: 100,
-        accuracyA: line.resolutionA * 2,
-        ...entered,
-      });
-      return range;
+      };
+      const instrumentId = instrument.id;
+      const accuracyA = line.resolutionA * 2;
+      context.rows.meterRanges.push({ ...range, instrumentId, accuracyA, ...entered });
+      return { ...range, validity: [] };
     });
   }
 
   function laySource(plan: InstrumentPlan, count: number): DemoChannel[] {
     const instrument = register.enter(plan);
-    const sourceOutputOhm = specifySource(instrument);
+    const figures = specifySource(instrument);
     return Array.from({ length: count }, (_, index) => {
       const label = `${plan.tag}/${index + 1}`;
       const { unitId } = channel(instrument, label, 'source');
-      return { unitId, label, instrument, sourceOutputOhm, ranges: [] };
+      return { unitId, label, instrument, ...figures, ranges: [] };
     });
   }
   function layMeter(plan: InstrumentPlan, count: number): DemoChannel[] {
@@ -117,12 +112,12 @@ export function layChannels(
     return Array.from({ length: count }, (_, index) => {
       const label = `${plan.tag}/${index + 1}`;
       const { unitId } = channel(instrument, label, 'measure');
-      return { unitId, label, instrument, sourceOutputOhm: 0, ranges };
+      return { unitId, label, instrument, ...noSource, ranges };
     });
   }
   function layPaired(plan: InstrumentPlan, count: number): WirePair[] {
     const instrument = register.enter(plan);
-    const sourceOutputOhm = specifySource(instrument);
+    const figures = specifySource(instrument);
     const ranges = specifyRanges(instrument);
     return Array.from({ length: count }, (_, index) => {
       const [sourceLabel, meterLabel] = [`${plan.tag}/${index + 1}S`, `${plan.tag}/${index + 1}M`];
@@ -135,8 +130,8 @@ export function layChannels(
         meterChannelId: meter.channelId,
       });
       return {
-        source: { unitId: source.unitId, label: sourceLabel, instrument, sourceOutputOhm, ranges },
-        meter: { unitId: meter.unitId, label: meterLabel, instrument, sourceOutputOhm, ranges },
+        source: { unitId: source.unitId, label: sourceLabel, instrument, ...figures, ranges },
+        meter: { unitId: meter.unitId, label: meterLabel, instrument, ...figures, ranges },
       };
     });
   }

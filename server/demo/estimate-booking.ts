@@ -1,3 +1,9 @@
+import { longestNeeds } from '#shared/domain/availability/longest-needs.ts';
+import { needsOfEstimate, type PhaseNeeds } from '#shared/domain/availability/needs-of-estimate.ts';
+import { chooseMeterRange } from '#shared/domain/availability/choose-meter-range.ts';
+import { judgeSourceStability } from '#shared/domain/checks/judge-source-stability.ts';
+import { judgeMeterRange, type MeasuringNeeds } from '#shared/domain/checks/judge-meter-range.ts';
+import { measuringNeeds } from '#shared/domain/checks/measuring-needs.ts';
 import { estimateSlot } from '#shared/domain/hold-estimate/estimate-slot.ts';
 import type {
   EstimateInput,
@@ -20,8 +26,20 @@ export type Aim = {
 };
 export type BookingEstimate = {
   readonly input: EstimateInput;
+  /** Of the slowest path. */
   readonly result: SingleEstimate;
-  readonly rangeOf: (path: DemoPath) => DemoRange;
+  /** The longest of all paths, phase by phase. */
+  readonly needs: PhaseNeeds;
+};
+export type RangedPath = { readonly path: DemoPath; readonly range: DemoRange };
+
+export type BookingOrder = {
+  readonly plan: ChamberPlan;
+  readonly type: DemoCellType;
+  readonly stateOfChargePct: number;
+  readonly cellCount: number;
+  readonly setC: number;
+  readonly aim: Aim;
 };
 
 const process: ProcessTimes = {
@@ -37,51 +55,72 @@ const process: ProcessTimes = {
   safePercentile: policyDefinitions.safePercentile.fallback / 100,
 };
 
+/** The paths that are good enough for a booking, each with the range the search would choose. */
+export function findFittingPaths(
+  order: BookingOrder,
+  paths: readonly DemoPath[],
+): readonly RangedPath[] {
+  const [first] = paths;
+  const widest = first?.meter.ranges.at(-1);
+  if (first === undefined || widest === undefined) {
+    return [];
+  }
+  const rough = estimateSlot(inputFor(order, { path: first, range: widest }));
+  const needs = measuringNeeds({ kind: order.aim.kind, screening: screeningOf(order.aim) }, rough);
+  if (needs === null) {
+    return [];
+  }
+  return paths.flatMap((path) => {
+    const range = findRange(path.meter.ranges, needs);
+    const isSteady = judgeSourceStability(path.source, needs).outcome !== 'stop';
+    return range !== undefined && isSteady ? [{ path, range }] : [];
+  });
+}
+
 /** Estimates a booking on its own paths; undefined where no slot would be offered. */
-export function estimateBooking(order: {
-  readonly plan: ChamberPlan;
-  readonly type: DemoCellType;
-  readonly stateOfChargePct: number;
-  readonly cellCount: number;
-  readonly path: DemoPath;
-  readonly setC: number;
-  readonly aim: Aim;
-}): BookingEstimate | undefined {
-  const widest = order.path.meter.ranges.at(-1);
-  if (widest === undefined) {
-    return undefined;
-  }
-  const rough = estimateSlot(inputFor(order, widest));
-  if (rough.outcome !== 'ok') {
-    return undefined;
-  }
-  const { expectedCurrentA } = rough.numbers;
-  const range = findRange(order.path.meter.ranges, expectedCurrentA);
-  if (range?.burdenOhm === undefined || range.burdenOhm === null) {
-    return undefined;
-  }
-  const input = inputFor(order, range);
-  const result = estimateSlot(input);
-  if (result.outcome !== 'ok') {
-    return undefined;
-  }
-  function rangeOf(path: DemoPath): DemoRange {
-    const found = findRange(path.meter.ranges, expectedCurrentA);
-    if (found === undefined) {
-      throw new RangeError(`${path.meter.label} has no range for ${expectedCurrentA} A.`);
+export function estimateBooking(
+  order: BookingOrder,
+  chosen: readonly RangedPath[],
+): BookingEstimate | undefined {
+  const seen = new Set<string>();
+  let slowest: BookingEstimate | undefined;
+  for (const wired of chosen) {
+    const input = inputFor(order, wired);
+    const key = JSON.stringify({ ...input.wiring, label: null });
+    if (seen.has(key)) {
+      continue;
     }
-    return found;
+    seen.add(key);
+    const result = estimateSlot(input);
+    if (result.outcome !== 'ok') {
+      return undefined;
+    }
+    const needs = longestNeeds([needsOfEstimate(result) ?? {}, slowest?.needs ?? {}]);
+    slowest =
+      slowest === undefined || result.safeTotalS > slowest.result.safeTotalS
+        ? { input, result, needs }
+        : { ...slowest, needs };
   }
-  return { input, result, rangeOf };
+  return slowest;
 }
 
-/** The narrowest range that leaves a margin above the expected current. */
-function findRange(ranges: readonly DemoRange[], currentA: number): DemoRange | undefined {
-  return ranges.find((range) => range.fullScaleA >= 1.5 * currentA);
+/** The range the search would choose, if it is good enough. */
+function findRange(ranges: readonly DemoRange[], needs: MeasuringNeeds): DemoRange | undefined {
+  const chosen = chooseMeterRange({ ranges }, needs);
+  const isGood =
+    chosen?.burdenOhm !== null &&
+    chosen !== null &&
+    judgeMeterRange(chosen, needs).outcome !== 'stop';
+  return isGood ? chosen : undefined;
 }
 
-function inputFor(order: Parameters<typeof estimateBooking>[0], range: DemoRange): EstimateInput {
-  const { type, path, plan } = order;
+function screeningOf(aim: Aim): EstimateInput['screening'] {
+  return { badToGoodRatio: aim.badToGoodRatio, falseAlarm: 0.01, miss: 0.01 };
+}
+
+function inputFor(order: BookingOrder, wired: RangedPath): EstimateInput {
+  const { type, plan } = order;
+  const { path, range } = wired;
   return {
     kind: order.aim.kind,
     cellCount: order.cellCount,
@@ -97,7 +136,7 @@ function inputFor(order: Parameters<typeof estimateBooking>[0], range: DemoRange
     setTemperatureC: order.setC,
     chamber: { idleTemperatureC: 25, rampKPerMin: plan.rampKPerMin },
     tolerance: order.aim.tolerance,
-    screening: { badToGoodRatio: order.aim.badToGoodRatio, falseAlarm: 0.01, miss: 0.01 },
+    screening: screeningOf(order.aim),
     wiring: {
       label: `${path.source.label} to ${path.positionLabel}`,
       leadResistanceOhm: path.leadResistanceOhm,

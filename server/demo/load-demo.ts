@@ -27,7 +27,7 @@ export type DemoCounts = {
 
 /** Loads the demo in one transaction: all of it or nothing. */
 export async function loadDemo(database: Database, order: DemoOrder): Promise<DemoCounts> {
-  const rows = buildDemo(order);
+  const { rows } = buildDemo(order);
   await database.transact(async (tx) => {
     if (!(await isEmpty(tx))) {
       if (!order.force) {

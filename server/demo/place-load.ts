@@ -1,11 +1,18 @@
+import { forecastDisturbance } from '#shared/domain/checks/forecast-disturbance.ts';
 import { startOfDayMs } from '#shared/domain/calendar/start-of-day-ms.ts';
 import { isInWorkingHours } from '#shared/domain/calendar/is-in-working-hours.ts';
-import type { PhaseSpan } from '#shared/domain/facility/types.ts';
+import type { PhaseSpan, StabilityFact } from '#shared/domain/facility/types.ts';
 import type { Span } from '#shared/domain/intervals/types.ts';
 import type { Batch } from './cells.ts';
 import type { Dice } from './dice.ts';
-import { estimateBooking, type Aim } from './estimate-booking.ts';
-import { joinNeeds, layPhases, needsOf } from './lay-phases.ts';
+import {
+  estimateBooking,
+  findFittingPaths,
+  type Aim,
+  type BookingEstimate,
+  type BookingOrder,
+} from './estimate-booking.ts';
+import { joinNeeds, layPhases } from './lay-phases.ts';
 import { dayMs, hourMs } from './demo-days.ts';
 import type { DueDays } from './metrology.ts';
 import type { Occupancy } from './occupancy.ts';
@@ -21,9 +28,10 @@ export type PlacingTools = {
   readonly batches: readonly Batch[];
   readonly occupancy: Occupancy;
   readonly dueDays: DueDays;
-  readonly driftOf: (path: DemoPath) => number;
+  /** The newest judged log of a chamber at a set temperature. */
+  readonly stabilityOf: (chamber: DemoChamber, setC: number) => StabilityFact | undefined;
   /** How many more bookings may lie over something that fails or runs out. */
-  readonly risksLeft: { count: number };
+  readonly risksLeft: Map<string, number>;
 };
 export type LoadPlace = {
   readonly chamber: DemoChamber;
@@ -73,14 +81,20 @@ function layMembers(
   place: LoadPlace,
   setC: number,
   members: readonly PlannedBooking[],
-): PhaseSpan[] | undefined {
+): readonly PhaseSpan[] | undefined {
   if (members.length === 0) {
     return undefined;
   }
   const needs = joinNeeds(
     members.map((member) => ({ needs: member.needs, cells: member.cellIds.length })),
   );
-  return layPhases(place.site.calendar, { startMs: place.startMs, needs, setC, idleC: 25 });
+  return layPhases(place.site.calendar, {
+    startMs: place.startMs,
+    needs,
+    setC,
+    idleC: 25,
+    isDoorStrict: place.chamber.plan.strict,
+  });
 }
 
 /** Without the safety officer's leave nothing goes on after the last person has left. */
@@ -111,7 +125,7 @@ function suits(batch: Batch, place: LoadPlace, setC: number): boolean {
     type.isReleased &&
     plan.formats.includes(type.format) &&
     type.capacityAh <= plan.maxAh &&
-    type.capacityAh >= plan.maxAh / 40 &&
+    (type.format === 'coin' || type.capacityAh >= plan.maxAh / 40) &&
     type.hazard <= plan.protection &&
     setC <= type.maxTestC - 5 &&
     place.startMs - batch.restedSinceMs > 8 * dayMs
@@ -137,44 +151,53 @@ function placeBooking(
   const cellIds = batch.cellIds.filter((id) => tools.occupancy.isCellFree(id, reach));
   const room = energyRoom(order);
   const count = Math.min(paths.length, cellIds.length, room, dice.whole(2, 6));
-  const first = paths[0];
-  if (count < 1 || first === undefined || members.some((member) => member.batch === batch)) {
+  if (count < 1 || members.some((member) => member.batch === batch)) {
     return undefined;
   }
   const aim = pickAim(dice);
-  const estimate = estimateBooking({
+  const booking: BookingOrder = {
     plan: place.chamber.plan,
     type: batch.type,
     stateOfChargePct: batch.stateOfChargePct,
     cellCount: count,
-    path: first,
     setC,
     aim,
-  });
+  };
+  const chosen = findFittingPaths(booking, paths).slice(0, count);
+  const estimate = chosen.length < count ? undefined : estimateBooking(booking, chosen);
   if (estimate === undefined) {
     return undefined;
   }
-  const quiet = paths.filter((path) => isQuiet(tools.driftOf(path), estimate.result.numbers));
-  if (quiet.length < count) {
-    return undefined;
-  }
-  const isPoor = place.chamber.plan.manner !== 'quiet';
+  const drifts = chosen.map(({ path }) => path.source.stabilityVPerH);
+  const isPoor =
+    place.chamber.plan.manner !== 'quiet' ||
+    isDisturbed(tools, order, { estimate, driftVPerH: Math.max(...drifts) });
   return {
     batch,
     cellIds: dice.shuffle(cellIds).slice(0, count),
-    paths: quiet.slice(0, count),
+    paths: chosen.map(({ path }) => path),
+    ranges: chosen.map(({ range }) => range),
     aim,
     grade: isPoor || dice.chance(0.2) ? 'indicative' : 'reported',
     estimate,
-    needs: needsOf(estimate.result),
+    needs: estimate.needs,
   };
 }
 
-function isQuiet(
-  driftVPerH: number,
-  numbers: { readonly capacitanceF: number; readonly allowanceA: number },
+/** Would the check on temperature-induced current stop reported work here? */
+function isDisturbed(
+  tools: PlacingTools,
+  order: { readonly place: LoadPlace; readonly setC: number },
+  work: { readonly estimate: BookingEstimate; readonly driftVPerH: number },
 ): boolean {
-  return (numbers.capacitanceF * driftVPerH) / 3600 <= 0.9 * numbers.allowanceA;
+  const fact = tools.stabilityOf(order.place.chamber, order.setC);
+  const { numbers, phases } = work.estimate.result;
+  const windowS = phases.find(({ phase }) => phase === 'measure')?.safeS ?? 0;
+  return (
+    fact === undefined ||
+    forecastDisturbance({ fact, numbers, sourceDriftVPerH: work.driftVPerH, windowS }).verdict ===
+      'disturbed'
+  );
 }
 
 function energyRoom(order: {
@@ -210,28 +233,27 @@ function isUsable(tools: PlacingTools, place: LoadPlace, path: DemoPath, reach: 
   if (!units.every((unitId) => tools.occupancy.isFree(unitId, reach))) {
     return false;
   }
-  const failsAtMs = failureOf(tools, place, path);
-  if (failsAtMs >= reach.endMs) {
+  const failure = failureOf(tools, place, path);
+  if (failure.atMs >= reach.endMs) {
     return true;
   }
   const isSoon =
-    reach.startMs > tools.nowMs + 4 * hourMs && reach.startMs < tools.nowMs + 12 * dayMs;
-  return isSoon && tools.risksLeft.count > 0;
+    reach.startMs > tools.nowMs + 4 * hourMs && reach.startMs < tools.nowMs + 14 * dayMs;
+  return isSoon && (tools.risksLeft.get(failure.tag) ?? 0) > 0;
 }
 
-/** The first moment at which something on the path breaks or runs out of calibration. */
+/** What on the path breaks or runs out of calibration first, and when. */
 export function failureOf(
   tools: Pick<PlacingTools, 'nowMs' | 'dueDays'>,
   place: Pick<LoadPlace, 'chamber' | 'site'>,
   path: DemoPath,
-): number {
+): { readonly tag: string; readonly atMs: number } {
   const broken = brokenSinceMs(tools.nowMs);
   const tags = [path.source.instrument.tag, path.meter.instrument.tag, place.chamber.plan.tag];
-  const moments = tags.flatMap((tag) => {
+  const failures = tags.map((tag) => {
     const dueOn = tools.dueDays.get(tag);
-    const dueMs = dueOn === undefined ? [] : [startOfDayMs(place.site.calendar, dueOn, 1)];
-    const brokenMs = broken[tag];
-    return brokenMs === undefined ? dueMs : [...dueMs, brokenMs];
+    const dueMs = dueOn === undefined ? Infinity : startOfDayMs(place.site.calendar, dueOn, 1);
+    return { tag, atMs: Math.min(dueMs, broken[tag] ?? Infinity) };
   });
-  return Math.min(...moments);
+  return failures.reduce((first, next) => (next.atMs < first.atMs ? next : first));
 }

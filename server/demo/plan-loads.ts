@@ -125,26 +125,28 @@ function settle(tools: PlacingTools, load: PlannedLoad): PlannedLoad {
   if (isPast && load.bookings.length === 1 && tools.dice.chance(0.07)) {
     return { ...load, cancelReason: cancelReason(tools.dice) };
   }
+  const place = { chamber: load.chamber, site: tools.sites[load.chamber.plan.site] };
+  const failing = new Set<string>();
   for (const booking of load.bookings) {
-    let isAtRisk = false;
     for (const path of booking.paths) {
       for (const unitId of [path.source.unitId, path.meter.unitId, path.positionUnitId]) {
         tools.occupancy.take(unitId, load.span);
       }
-      isAtRisk ||= failureOf(tools, placeOf(load, tools), path) < load.span.endMs;
-    }
-    if (isAtRisk && load.span.endMs > tools.nowMs) {
-      tools.risksLeft.count -= 1;
+      const failure = failureOf(tools, place, path);
+      if (failure.atMs < load.span.endMs) {
+        failing.add(failure.tag);
+      }
     }
     for (const cellId of booking.cellIds) {
       tools.occupancy.takeCell(cellId, load.span);
     }
   }
+  if (!isPast) {
+    for (const tag of failing) {
+      tools.risksLeft.set(tag, (tools.risksLeft.get(tag) ?? 0) - 1);
+    }
+  }
   return load;
-}
-
-function placeOf(load: PlannedLoad, tools: PlacingTools): { chamber: DemoChamber; site: DemoSite } {
-  return { chamber: load.chamber, site: tools.sites[load.chamber.plan.site] };
 }
 
 function cancelReason(dice: Dice): string {

@@ -9,7 +9,7 @@ import type { DemoChamber } from './wiring.ts';
 
 /** A log older than the policy's 90 days no longer counts. */
 const staleLog = { tag: 'C02', setC: 45, days: 97 };
-const mappingDueInDays: Readonly<Record<string, number>> = { C05: 2, C09: 24, C14: -11 };
+const mappingDueInDays: Readonly<Record<string, number>> = { C05: 52, C09: 24, C14: -11 };
 
 /** Judged logs: the newest of each set temperature and some that came before. */
 export function layStability(
@@ -26,7 +26,7 @@ export function layStability(
     const zone = input.sites[plan.site].zone;
     for (const setC of plan.loggedC) {
       const newest =
-        plan.tag === staleLog.tag && setC === staleLog.setC ? staleLog.days : dice.whole(4, 62);
+        plan.tag === staleLog.tag && setC === staleLog.setC ? staleLog.days : dice.whole(4, 42);
       for (const ageDays of [newest + 180 + dice.whole(0, 20), newest + 88, newest]) {
         const logToMs = context.nowMs - ageDays * dayMs;
         const hoursLogged = dice.pick([36, 48, 60, 72]);
@@ -70,7 +70,7 @@ function figuresOf(
       halfBandK: 0.1,
       periodS: null,
       resolutionK: 0.1,
-      sensorPlace: 'air, beside the fan grille',
+      sensorPlace: 'air',
     };
   }
   if (plan.manner === 'restless') {
@@ -79,7 +79,7 @@ function figuresOf(
       halfBandK: milli(dice.between(30, 45)),
       periodS: 780,
       resolutionK: 0.001,
-      sensorPlace: 'on a dummy cell, middle shelf',
+      sensorPlace: 'dummy',
     };
   }
   return {
@@ -87,7 +87,7 @@ function figuresOf(
     halfBandK: milli(dice.between(1.5, 3)),
     periodS: dice.pick([300, 360, 420]),
     resolutionK: 0.001,
-    sensorPlace: 'on a dummy cell, middle position',
+    sensorPlace: 'dummy',
   };
 }
 

@@ -1,3 +1,4 @@
+import type { Dice } from './dice.ts';
 import type { LoadPhase } from '#shared/domain/hold-estimate/types.ts';
 import type { RunEventKind } from '#shared/domain/states.ts';
 import { stamped } from './demo-context.ts';
@@ -19,62 +20,66 @@ export function writeRun(
   const { nowMs, rows } = context;
   const runId = context.number('runs');
   const startedMs = load.span.startMs + dice.whole(0, 9) * minuteMs;
-  const isOver = load.span.endMs <= nowMs;
-  const isAborted = isOver && dice.chance(0.03);
-  const endedMs = load.span.endMs - dice.whole(1, 12) * minuteMs;
-  const { hold } = booking.estimate.result;
-  const settleS = Math.round((hold.likelyS * Math.exp(0.04 + 0.27 * dice.normal())) / 60) * 60;
   const personId = dice.pick([...booking.batch.project.requesterIds, people.scheduler]);
-  const endReason = isAborted ? 'aborted' : 'completed';
+  const ending = load.span.endMs <= nowMs ? endOf(load, booking, dice) : undefined;
   rows.runs.push({
     id: runId,
     bookingId: work.bookingId,
     startedAt: new Date(startedMs),
-    ...(isOver ? { endedAt: new Date(endedMs), endReason } : {}),
-    observedSettleS: isOver && !isAborted ? settleS : null,
-    note: isAborted ? 'Power dip during the hold; the cells were at rest and unharmed.' : null,
+    ...ending?.columns,
     startedById: personId,
-    ...stamped(startedMs, isOver ? endedMs : startedMs),
+    ...stamped(startedMs, ending?.endedMs ?? startedMs),
   });
 
   function note(
     kind: RunEventKind,
     atMs: number,
     detail: Readonly<Record<string, unknown>>,
-    phase: LoadPhase | null = null,
+    phase: LoadPhase,
   ): void {
-    if (atMs > nowMs) {
-      return;
+    if (atMs <= nowMs) {
+      rows.runEvents.push({
+        id: context.number('runEvents'),
+        runId,
+        at: new Date(atMs),
+        kind,
+        phase,
+        detail,
+        recordedById: personId,
+        createdAt: new Date(atMs + minuteMs),
+      });
     }
-    rows.runEvents.push({
-      id: context.number('runEvents'),
-      runId,
-      at: new Date(atMs),
-      kind,
-      phase,
-      detail,
-      recordedById: personId,
-      createdAt: new Date(atMs + minuteMs),
-    });
   }
 
   note('check-in', startedMs, { cells: booking.cellIds.length, othersInside: false }, 'connect');
-  for (const phase of load.phases) {
-    if (phase.phase === 'match' || phase.phase === 'measure') {
-      note('phase-started', phase.startMs, {}, phase.phase);
+  for (const { phase, startMs, endMs } of load.phases) {
+    if (phase === 'match' || phase === 'measure') {
+      note('phase-started', startMs, {}, phase);
+    }
+    if (phase === 'measure' && ending?.columns.endReason !== 'aborted') {
+      readings(tools, booking).forEach((detail) => {
+        note('reading', endMs - minuteMs, detail, 'measure');
+      });
     }
   }
-  const measure = load.phases.find((phase) => phase.phase === 'measure');
-  if (measure !== undefined && !isAborted) {
-    for (const detail of readings(tools, booking)) {
-      note('reading', measure.endMs - minuteMs, detail, 'measure');
-    }
-  }
-  if (isOver) {
-    note('ended', endedMs, { reason: endReason }, 'unload');
-  } else {
+  if (ending === undefined) {
     markInTest(tools, booking);
+  } else {
+    note('ended', ending.endedMs, { reason: ending.columns.endReason }, 'unload');
   }
+}
+
+/** How a run ended: nearly always as planned, with a settling time spread around the likely one. */
+function endOf(load: PlannedLoad, booking: PlannedBooking, dice: Dice) {
+  const endedMs = load.span.endMs - dice.whole(1, 12) * minuteMs;
+  const endedAt = new Date(endedMs);
+  if (dice.chance(0.03)) {
+    const note = 'Power dip during the hold; the cells were at rest and unharmed.';
+    return { endedMs, columns: { endedAt, endReason: 'aborted', note } as const };
+  }
+  const { likelyS } = booking.estimate.result.hold;
+  const observedSettleS = Math.round((likelyS * Math.exp(0.04 + 0.27 * dice.normal())) / 60) * 60;
+  return { endedMs, columns: { endedAt, endReason: 'completed', observedSettleS } as const };
 }
 
 /** One settled current a cell; a few cells leak several times more than they should. */

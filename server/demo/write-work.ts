@@ -233,7 +233,8 @@ function writePaths(
   const { booking, bookingId, load } = work;
   booking.paths.forEach((path, index) => {
     const cellId = booking.cellIds[index];
-    if (cellId === undefined) {
+    const range = booking.ranges[index];
+    if (cellId === undefined || range === undefined) {
       throw new RangeError(`Booking ${bookingId} of the demo has more paths than cells.`);
     }
     context.rows.bookingCells.push({
@@ -243,7 +244,7 @@ function writePaths(
       sourceUnitId: path.source.unitId,
       meterUnitId: path.meter.unitId,
       positionUnitId: path.positionUnitId,
-      meterRangeId: booking.estimate.rangeOf(path).id,
+      meterRangeId: range.id,
       panelId: path.panelId,
     });
     for (const unitId of [path.source.unitId, path.meter.unitId, path.positionUnitId]) {
