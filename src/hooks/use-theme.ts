@@ -1,4 +1,4 @@
-import { useEffect, useState } from 'react';
+import { useEffect, useSyncExternalStore } from 'react';
 
 export const themeChoices = ['system', 'light', 'dark'] as const;
 export type ThemeChoice = (typeof themeChoices)[number];
@@ -25,9 +25,32 @@ function keepChoice(choice: ThemeChoice): void {
   }
 }
 
-/** Follows the system unless the person chose; the choice is kept in this browser. */
+let current: ThemeChoice | undefined;
+const listeners = new Set<() => void>();
+
+function getChoice(): ThemeChoice {
+  current ??= readChoice();
+  return current;
+}
+
+function subscribe(listener: () => void): () => void {
+  listeners.add(listener);
+  return () => {
+    listeners.delete(listener);
+  };
+}
+
+function choose(choice: ThemeChoice): void {
+  current = choice;
+  keepChoice(choice);
+  listeners.forEach((listener) => {
+    listener();
+  });
+}
+
+/** Follows the system unless the person chose; every switch on the page shows the same choice. */
 export function useTheme(): readonly [ThemeChoice, (choice: ThemeChoice) => void] {
-  const [choice, setChoice] = useState(readChoice);
+  const choice = useSyncExternalStore(subscribe, getChoice);
   useEffect(() => {
     const system = window.matchMedia(darkQuery);
     const apply = () => {
@@ -40,9 +63,5 @@ export function useTheme(): readonly [ThemeChoice, (choice: ThemeChoice) => void
       system.removeEventListener('change', apply);
     };
   }, [choice]);
-  const choose = (next: ThemeChoice) => {
-    keepChoice(next);
-    setChoice(next);
-  };
   return [choice, choose] as const;
 }
