@@ -1,15 +1,8 @@
-import type { Load } from '#shared/domain/facility/types.ts';
+import { listContentLimits } from './list-content-limits.ts';
+import type { ContentLimit } from './list-content-limits.ts';
 import { makeResult } from './make-result.ts';
-import { sumContents } from './sum-contents.ts';
 import type { CheckResult, PlacementFacts } from './types.ts';
 import { formatFigure } from './words/format-figure.ts';
-
-type Limit = {
-  readonly place: string;
-  readonly value: number;
-  readonly limit: number;
-  readonly unit: string;
-};
 
 /**
  * Do all cells together stay within the energy and count limit of the chamber, and within the energy
@@ -18,7 +11,7 @@ type Limit = {
  * @example checkEnergyAndCount(facts).sentence // 'C03 would hold 420 Wh of 400 Wh.'
  */
 export function checkEnergyAndCount(facts: PlacementFacts): CheckResult {
-  const limits = listLimits(facts);
+  const limits = listContentLimits(facts);
   const worst = limits.toSorted((first, second) => use(second) - use(first))[0];
   if (worst === undefined) {
     return makeResult('energy-and-count', 'pass', 'No limit is set.');
@@ -44,37 +37,6 @@ export function checkEnergyAndCount(facts: PlacementFacts): CheckResult {
   );
 }
 
-function use(limit: Limit): number {
+function use(limit: ContentLimit): number {
   return limit.limit > 0 ? limit.value / limit.limit : Infinity;
-}
-
-function listLimits(facts: PlacementFacts): readonly Limit[] {
-  const { chamber, request, facility } = facts;
-  const own = { cells: request.cellCount, energyWh: request.cellCount * request.limits.energyWh };
-  const live = (loads: readonly Load[]): readonly Load[] =>
-    loads.filter((load) => load.state !== 'cancelled');
-  const inside = sumContents(live(chamber.loads), facts.span, facts.ignoreBookingId);
-  const limits: Limit[] = [
-    {
-      place: chamber.tag,
-      value: inside.energyWh + own.energyWh,
-      limit: chamber.maxEnergyWh,
-      unit: 'Wh',
-    },
-    { place: chamber.tag, value: inside.cells + own.cells, limit: chamber.maxCells, unit: 'cells' },
-  ];
-  const room = facility.rooms?.find((candidate) => candidate.name === chamber.roomName);
-  if (room !== undefined) {
-    const loads = facility.chambers
-      .filter((candidate) => candidate.roomName === room.name)
-      .flatMap((candidate) => live(candidate.loads));
-    const together = sumContents(loads, facts.span, facts.ignoreBookingId);
-    limits.push({
-      place: room.name,
-      value: together.energyWh + own.energyWh,
-      limit: room.maxEnergyWh,
-      unit: 'Wh',
-    });
-  }
-  return limits;
 }

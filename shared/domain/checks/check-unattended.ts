@@ -1,5 +1,5 @@
 import { isInWorkingHours } from '#shared/domain/calendar/is-in-working-hours.ts';
-import { containsSpan } from '#shared/domain/intervals/contains-span.ts';
+import { findPermission } from './find-permission.ts';
 import { makeResult } from './make-result.ts';
 import type { CheckResult, PlacementFacts } from './types.ts';
 import { formatTemperature } from './words/format-temperature.ts';
@@ -18,14 +18,7 @@ export function checkUnattended(facts: PlacementFacts): CheckResult {
     return makeResult(code, 'pass', 'The whole slot lies in working hours.');
   }
   const charge = request.cell.stateOfChargePct ?? request.limits.maxHoldStateOfCharge;
-  const permission = chamber.unattended.find(
-    (candidate) =>
-      facts.setTemperatureC <= candidate.maxTemperatureC &&
-      request.limits.hazardLevel <= candidate.maxHazard &&
-      charge <= candidate.maxStateOfCharge &&
-      (candidate.during === undefined || containsSpan(candidate.during, facts.span)) &&
-      (candidate.cellTypeName === undefined || candidate.cellTypeName === request.cellTypeName),
-  );
+  const permission = findPermission(facts);
   if (permission === undefined) {
     return makeResult(
       code,

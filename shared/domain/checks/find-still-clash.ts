@@ -1,5 +1,6 @@
 import type { Load, PhaseSpan } from '#shared/domain/facility/types.ts';
 import { overlaps } from '#shared/domain/intervals/overlaps.ts';
+import { mayMeet } from './may-meet.ts';
 import type { PhaseClash } from './find-temperature-clash.ts';
 import { isStill } from './is-still.ts';
 
@@ -16,6 +17,9 @@ export function findStillClash(
   isStrict: boolean,
 ): PhaseClash | null {
   for (const load of others) {
+    if (!mayMeet(phases, load)) {
+      continue;
+    }
     for (const other of load.phases) {
       const otherStill = isStill(other.phase, isStrict);
       if (otherStill === null) {

@@ -1,5 +1,6 @@
 import type { Load, PhaseSpan } from '#shared/domain/facility/types.ts';
 import { overlaps } from '#shared/domain/intervals/overlaps.ts';
+import { mayMeet } from './may-meet.ts';
 
 export type PhaseClash = {
   readonly load: Load;
@@ -18,6 +19,9 @@ export function findTemperatureClash(
   others: readonly Load[],
 ): PhaseClash | null {
   for (const load of others) {
+    if (!mayMeet(phases, load)) {
+      continue;
+    }
     for (const other of load.phases) {
       for (const own of phases) {
         if (
