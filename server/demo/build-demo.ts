@@ -1,3 +1,4 @@
+import type { SingleEstimate } from '#shared/domain/hold-estimate/types.ts';
 import type { StabilityFact } from '#shared/domain/facility/types.ts';
 import { layCellTypes } from './cell-types.ts';
 import { fillCellStock, openCellStock } from './cells.ts';
@@ -25,6 +26,8 @@ export type Demo = {
   /** The moment it is seen from. */
   readonly nowMs: number;
   readonly wished: WishedRequests;
+  /** Estimates of all bookings, by number. */
+  readonly estimates: ReadonlyMap<number, SingleEstimate>;
 };
 
 /** Builds every row of the demo; the same seed and moment give the same rows. */
@@ -64,9 +67,12 @@ export function buildDemo(input: { readonly seed: number; readonly nowMs: number
     },
     { chambers, sites },
   );
-  writeWork({ context, sites, people, dueDays, dice: context.diceFor('work') }, loads);
+  const estimates = writeWork(
+    { context, sites, people, dueDays, dice: context.diceFor('work') },
+    loads,
+  );
   const wished = layOpenRequests({ context, stock, sites, people });
-  return { rows: context.rows, nowMs: context.nowMs, wished };
+  return { rows: context.rows, nowMs: context.nowMs, wished, estimates };
 }
 
 /** The newest judged log by chamber and set temperature. */

@@ -17,7 +17,7 @@ import type {
   meterRangesTable,
   sourceSpecsTable,
 } from '#server/db/tables/channel.table.ts';
-import type { checkResultsTable, deviationsTable } from '#server/db/tables/check-result.table.ts';
+import type { deviationsTable } from '#server/db/tables/check-result.table.ts';
 import type { instrumentsTable } from '#server/db/tables/instrument.table.ts';
 import type { chamberLoadsTable, loadPhasesTable } from '#server/db/tables/load.table.ts';
 import type { otherWorkTable } from '#server/db/tables/other-work.table.ts';
@@ -93,7 +93,6 @@ export type DemoRows = {
   readonly bookings: RowOf<typeof bookingsTable>[];
   readonly bookingCells: RowOf<typeof bookingCellsTable>[];
   readonly allocations: RowOf<typeof allocationsTable>[];
-  readonly checkResults: RowOf<typeof checkResultsTable>[];
   readonly deviations: RowOf<typeof deviationsTable>[];
   readonly runs: RowOf<typeof runsTable>[];
   readonly runEvents: RowOf<typeof runEventsTable>[];
@@ -140,7 +139,6 @@ export function emptyRows(): DemoRows {
     bookings: [],
     bookingCells: [],
     allocations: [],
-    checkResults: [],
     deviations: [],
     runs: [],
     runEvents: [],

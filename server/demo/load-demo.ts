@@ -3,6 +3,7 @@ import type { Database, Tx } from '#server/db/client.ts';
 import { personsTable } from '#server/db/tables/person.table.ts';
 import { sitesTable } from '#server/db/tables/site.table.ts';
 import { buildDemo } from './build-demo.ts';
+import { judgeDemo, loadDemoSites } from './judge-demo.ts';
 import { demoProviderKey } from './people.ts';
 import { writeDemo } from './write-demo.ts';
 
@@ -27,7 +28,8 @@ export type DemoCounts = {
 
 /** Loads the demo in one transaction: all of it or nothing. */
 export async function loadDemo(database: Database, order: DemoOrder): Promise<DemoCounts> {
-  const { rows } = buildDemo(order);
+  const demo = buildDemo(order);
+  const { rows } = demo;
   await database.transact(async (tx) => {
     if (!(await isEmpty(tx))) {
       if (!order.force) {
@@ -38,6 +40,7 @@ export async function loadDemo(database: Database, order: DemoOrder): Promise<De
       await emptyDatabase(tx);
     }
     await writeDemo(tx, rows);
+    await judgeDemo(tx, demo, await loadDemoSites(tx, demo.nowMs));
   });
   const isPast = (state: string): boolean => state === 'done' || state === 'cancelled';
   return {

@@ -1,5 +1,4 @@
-import { sql, type SQL } from 'drizzle-orm';
-import { getTableConfig, type PgInsertValue, type PgTable } from 'drizzle-orm/pg-core';
+import type { PgInsertValue, PgTable } from 'drizzle-orm/pg-core';
 import type { Tx } from '#server/db/client.ts';
 import { allocationsTable } from '#server/db/tables/allocation.table.ts';
 import { auditEventsTable } from '#server/db/tables/audit.table.ts';
@@ -18,7 +17,7 @@ import {
   meterRangesTable,
   sourceSpecsTable,
 } from '#server/db/tables/channel.table.ts';
-import { checkResultsTable, deviationsTable } from '#server/db/tables/check-result.table.ts';
+import { deviationsTable } from '#server/db/tables/check-result.table.ts';
 import { instrumentsTable } from '#server/db/tables/instrument.table.ts';
 import { chamberLoadsTable, loadPhasesTable } from '#server/db/tables/load.table.ts';
 import { otherWorkTable } from '#server/db/tables/other-work.table.ts';
@@ -48,28 +47,14 @@ import {
   unitsTable,
 } from '#server/db/tables/unit.table.ts';
 import type { DemoRows } from './demo-rows.ts';
+import { insertNumberedRows } from './insert-rows.ts';
 
-/** The server takes at most this many values in one statement. */
-const maxValuesPerStatement = 20_000;
-
-/** Writes all rows, parents first, each table in as few statements as it takes. */
+/** Writes all rows, parents first. */
 export async function writeDemo(tx: Tx, rows: DemoRows): Promise<void> {
-  async function insert<Table extends PgTable>(
+  const insert = <Table extends PgTable>(
     table: Table,
-    values: PgInsertValue<Table, true>[],
-  ): Promise<void> {
-    const { columns, name } = getTableConfig(table);
-    const size = Math.max(1, Math.floor(maxValuesPerStatement / columns.length));
-    for (let from = 0; from < values.length; from += size) {
-      await tx
-        .insert(table)
-        .overridingSystemValue()
-        .values(values.slice(from, from + size));
-    }
-    if (values.length > 0 && columns.some((column) => column.generatedIdentity !== undefined)) {
-      await tx.execute(continueNumbers(name));
-    }
-  }
+    values: readonly PgInsertValue<Table, true>[],
+  ): Promise<void> => insertNumberedRows(tx, table, values);
 
   await insert(sitesTable, rows.sites);
   await insert(siteCalendarExceptionsTable, rows.siteExceptions);
@@ -109,14 +94,8 @@ export async function writeDemo(tx: Tx, rows: DemoRows): Promise<void> {
   await insert(bookingsTable, rows.bookings);
   await insert(bookingCellsTable, rows.bookingCells);
   await insert(allocationsTable, rows.allocations);
-  await insert(checkResultsTable, rows.checkResults);
   await insert(deviationsTable, rows.deviations);
   await insert(runsTable, rows.runs);
   await insert(runEventsTable, rows.runEvents);
   await insert(auditEventsTable, rows.auditEvents);
-}
-
-/** Record numbers given later go on after the highest one written here. */
-function continueNumbers(table: string): SQL {
-  return sql`select setval(pg_get_serial_sequence(${table}, 'id'), (select max(id) from ${sql.identifier(table)}))`;
 }

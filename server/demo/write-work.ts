@@ -1,5 +1,5 @@
 import { previousWorkingMoment } from '#shared/domain/calendar/previous-working-moment.ts';
-import { estimateModelVersion } from '#shared/domain/hold-estimate/types.ts';
+import { estimateModelVersion, type SingleEstimate } from '#shared/domain/hold-estimate/types.ts';
 import type { BookingState, LoadState, RequestState } from '#shared/domain/states.ts';
 import { stamped, type DemoContext } from './demo-context.ts';
 import { dayMs, hourMs, minuteMs } from './demo-days.ts';
@@ -23,17 +23,26 @@ type Dated = {
   readonly submittedMs: readonly number[];
 };
 
-/** Gives planned loads their numbers, oldest request first, and writes everything that hangs on them. */
-export function writeWork(tools: WorkTools, loads: readonly PlannedLoad[]): void {
+/**
+ * Gives planned loads their numbers, oldest request first, and writes everything that hangs on them.
+ * Returns the estimates by booking.
+ */
+export function writeWork(
+  tools: WorkTools,
+  loads: readonly PlannedLoad[],
+): ReadonlyMap<number, SingleEstimate> {
+  const estimates = new Map<number, SingleEstimate>();
   const dated = loads
     .map((load): Dated => ({ load, submittedMs: load.bookings.map(() => submitted(tools, load)) }))
     .sort((a, b) => Math.min(...a.submittedMs) - Math.min(...b.submittedMs));
   for (const { load, submittedMs } of dated) {
     const loadId = writeLoad(tools, load);
     load.bookings.forEach((booking, index) => {
-      writeBooking(tools, { load, loadId, booking, submittedMs: submittedMs[index] ?? 0 });
+      const at = { load, loadId, booking, submittedMs: submittedMs[index] ?? 0 };
+      estimates.set(writeBooking(tools, at), booking.estimate.result);
     });
   }
+  return estimates;
 }
 
 function submitted(tools: WorkTools, load: PlannedLoad): number {
@@ -123,7 +132,7 @@ function writeBooking(
     readonly booking: PlannedBooking;
     readonly submittedMs: number;
   },
-): void {
+): number {
   const { context, people, dice, sites } = tools;
   const { load, booking } = work;
   const { nowMs } = context;
@@ -167,6 +176,7 @@ function writeBooking(
   if (state === 'done' || state === 'running') {
     writeRun(tools, { load, booking, bookingId: id });
   }
+  return id;
 }
 
 function writeRequest(
