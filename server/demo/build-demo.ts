@@ -1,5 +1,6 @@
 import type { SingleEstimate } from '#shared/domain/hold-estimate/types.ts';
 import type { StabilityFact } from '#shared/domain/facility/types.ts';
+import { layAuditTrail } from './audit-trail.ts';
 import { layCellTypes } from './cell-types.ts';
 import { fillCellStock, openCellStock } from './cells.ts';
 import { layChannels } from './channel-plan.ts';
@@ -14,6 +15,7 @@ import { layOutages } from './outages.ts';
 import { layPeople } from './people.ts';
 import { planLoads } from './plan-loads.ts';
 import { layProjects } from './projects.ts';
+import { addSecondLot } from './second-lot.ts';
 import { laySites } from './sites.ts';
 import { layStability } from './stability.ts';
 import { layChambers, type DemoChamber } from './wiring.ts';
@@ -71,7 +73,9 @@ export function buildDemo(input: { readonly seed: number; readonly nowMs: number
     { context, sites, people, dueDays, dice: context.diceFor('work') },
     loads,
   );
+  addSecondLot(context, stock);
   const wished = layOpenRequests({ context, stock, sites, people });
+  layAuditTrail(context, people);
   return { rows: context.rows, nowMs: context.nowMs, wished, estimates };
 }
 

@@ -11,7 +11,7 @@ import { loadSlotRequests } from '#server/features/availability/slot-request.ser
 import type { SlotRequest } from '#shared/domain/availability/types.ts';
 import { evaluatePlacement } from '#shared/domain/checks/evaluate-placement.ts';
 import type { CheckResult, PathChoice } from '#shared/domain/checks/types.ts';
-import type { FacilityIndex } from '#shared/domain/facility/types.ts';
+import type { FacilityIndex, ServiceState } from '#shared/domain/facility/types.ts';
 import type { BookingState, CheckStage } from '#shared/domain/states.ts';
 import type { Demo } from './build-demo.ts';
 import { known } from './demo-context.ts';
@@ -50,7 +50,8 @@ export async function judgeDemo(
       const request = known(requests, booking.id);
       const checks = checkBooking(demo, { booking, request, loaded });
       const confirmedAt = booking.confirmedAt ?? booking.createdAt;
-      results.push(...toRows(booking.id, 'confirm', checks, confirmedAt));
+      const before = checkBooking(demo, { booking, request, loaded: beforeTrouble(loaded) });
+      results.push(...toRows(booking.id, 'confirm', before, confirmedAt));
       const stop = checks.find((check) => check.outcome === 'stop');
       if (stop !== undefined) {
         results.push(...toRows(booking.id, 'recheck', checks, new Date(demo.nowMs)));
@@ -81,6 +82,26 @@ function toRows(
     sentence,
     evidence,
   }));
+}
+
+/** The site as it was when nothing had broken yet: that is how bookings were confirmed. */
+function beforeTrouble(loaded: LoadedFacility): LoadedFacility {
+  const { index } = loaded;
+  const inService = <Thing extends { readonly state: ServiceState }>(
+    things: ReadonlyMap<number, Thing>,
+  ): Map<number, Thing> =>
+    new Map([...things].map(([id, thing]) => [id, { ...thing, state: 'in-service' }]));
+  return {
+    ...loaded,
+    index: {
+      ...index,
+      chambers: inService(index.chambers),
+      sources: inService(index.sources),
+      meters: inService(index.meters),
+      positions: inService(index.positions),
+      unavailable: new Map(),
+    },
+  };
 }
 
 /** The checks of a booking where it stands. */

@@ -5,6 +5,7 @@ import { sitesTable } from '#server/db/tables/site.table.ts';
 import { buildDemo } from './build-demo.ts';
 import { judgeDemo, loadDemoSites } from './judge-demo.ts';
 import { demoProviderKey } from './people.ts';
+import { proposeSlots } from './propose-slots.ts';
 import { writeDemo } from './write-demo.ts';
 
 export class DemoError extends Error {
@@ -40,7 +41,9 @@ export async function loadDemo(database: Database, order: DemoOrder): Promise<De
       await emptyDatabase(tx);
     }
     await writeDemo(tx, rows);
-    await judgeDemo(tx, demo, await loadDemoSites(tx, demo.nowMs));
+    const facilities = await loadDemoSites(tx, demo.nowMs);
+    await judgeDemo(tx, demo, facilities);
+    await proposeSlots(tx, demo, facilities);
   });
   const isPast = (state: string): boolean => state === 'done' || state === 'cancelled';
   return {

@@ -232,14 +232,4 @@ export const openRequestPlans: readonly OpenRequestPlan[] = [
     neededInDays: 28,
     note: 'Only C14 takes 4680 here.',
   },
-  {
-    ...usual,
-    project: 'MAPLE',
-    type: 'PX20',
-    count: 4,
-    setC: 25,
-    daysAgo: 1,
-    neededInDays: null,
-    state: 'draft',
-  },
 ];

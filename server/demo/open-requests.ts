@@ -14,7 +14,11 @@ type Tools = {
   readonly people: People;
 };
 /** Requests whose engineer already has a slot in mind; the slot is looked up once all is written. */
-export type WishedRequests = readonly { readonly requestId: number; readonly lotId: number }[];
+export type WishedRequests = readonly {
+  readonly requestId: number;
+  readonly lotId: number;
+  readonly siteId: number;
+}[];
 
 export function layOpenRequests(tools: Tools): WishedRequests {
   return openRequestPlans.flatMap((plan, index) => {
@@ -29,6 +33,7 @@ export function layOpenRequests(tools: Tools): WishedRequests {
 type Written = {
   readonly requestId: number;
   readonly lotId: number;
+  readonly siteId: number;
   readonly requesterId: number;
   readonly submittedMs: number;
 };
@@ -69,7 +74,7 @@ function layRequest(tools: Tools, plan: OpenRequestPlan, index: number): Written
   for (const cellId of batch?.cellIds ?? []) {
     context.rows.lotCells.push({ lotId, cellId });
   }
-  return { requestId, lotId, requesterId, submittedMs };
+  return { requestId, lotId, siteId: site.id, requesterId, submittedMs };
 }
 
 function aimOf(plan: OpenRequestPlan) {
