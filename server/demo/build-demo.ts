@@ -61,7 +61,7 @@ export function buildDemo(input: { readonly seed: number; readonly nowMs: number
       stabilityOf: stabilityIn(context),
       risksLeft: new Map([
         ['M07', 2],
-        ['S08', 1],
+        ['S03', 1],
         ['S02', 1],
         ['C09', 2],
         ['M11', 1],

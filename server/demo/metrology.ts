@@ -15,7 +15,7 @@ const dueInDays: Readonly<Record<string, number>> = {
   L03: 12,
   S05: 26,
   R05: 28,
-  S08: 4,
+  S03: 4,
 };
 const intervalMonths: Partial<Record<InstrumentKind, number>> = {
   standard: 24,

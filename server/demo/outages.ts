@@ -31,7 +31,7 @@ const plans: readonly OutagePlan[] = [
     by: 'scheduler',
   },
   {
-    tag: 'S08',
+    tag: 'S03',
     title: 'away for calibration',
     reason: 'Goes to Quellmoor, back by courier.',
     from: { plusDays: 2, hour: 14 },
