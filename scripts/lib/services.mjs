@@ -28,8 +28,8 @@ async function startDatabase({ folder, ports, secrets }) {
   };
 }
 
-async function runTypescript(root, script, env, what) {
-  const { stdout } = await run(process.execPath, [...typescript, script], {
+async function runTypescript(root, script, env, what, ...args) {
+  const { stdout } = await run(process.execPath, [...typescript, script, ...args], {
     cwd: root,
     env,
     failure: (written) =>
@@ -104,6 +104,7 @@ export async function startServices(root, options) {
       'server/cli/load-demo.ts',
       environment.owner,
       'The demo could not be loaded',
+      '--if-empty',
     );
     if (loaded !== '') {
       say(loaded);

@@ -5,12 +5,12 @@ import { defaultDemoSeed } from '#server/demo/build-demo.ts';
 import { DemoError, loadDemo } from '#server/demo/load-demo.ts';
 import { findOwnerUrl } from './config.ts';
 
-/** `tsx server/cli/load-demo.ts [--force]` with the owner's address in DATABASE_OWNER_URL. */
+/** `tsx server/cli/load-demo.ts [--force | --if-empty]` with the owner's address in DATABASE_OWNER_URL. */
 async function main(args: readonly string[]): Promise<number> {
   const ownerUrl = findOwnerUrl();
-  const unknown = args.find((arg) => arg !== '--force');
+  const unknown = args.find((arg) => arg !== '--force' && arg !== '--if-empty');
   if (unknown !== undefined) {
-    process.stderr.write(`"${unknown}" is no option: the only one is --force.\n`);
+    process.stderr.write(`"${unknown}" is no option: there are --force and --if-empty.\n`);
     return 2;
   }
   if (ownerUrl === undefined || !URL.canParse(ownerUrl)) {
@@ -25,7 +25,11 @@ async function main(args: readonly string[]): Promise<number> {
       seed: defaultDemoSeed,
       nowMs: systemClock.now().getTime(),
       force: args.includes('--force'),
+      onlyIfEmpty: args.includes('--if-empty'),
     });
+    if (counts === null) {
+      return 0;
+    }
     process.stdout.write(
       `Loaded Larkfen Cells: ${counts.instruments} instruments with ${counts.units} units, ${counts.cells} cells, ${counts.pastBookings} past and ${counts.futureBookings} current or future bookings, ${counts.openRequests} open requests.\n`,
     );

@@ -1,5 +1,5 @@
 import { sql } from 'drizzle-orm';
-import type { Database, Tx } from '#server/db/client.ts';
+import type { Database, Reader, Tx } from '#server/db/client.ts';
 import { personsTable } from '#server/db/tables/person.table.ts';
 import { sitesTable } from '#server/db/tables/site.table.ts';
 import { buildDemo } from './build-demo.ts';
@@ -17,6 +17,8 @@ export type DemoOrder = {
   readonly nowMs: number;
   /** Empties the database first. */
   readonly force: boolean;
+  /** Leaves a database that holds something as it is, without calling that a failure. */
+  readonly onlyIfEmpty?: boolean;
 };
 export type DemoCounts = {
   readonly instruments: number;
@@ -27,8 +29,11 @@ export type DemoCounts = {
   readonly openRequests: number;
 };
 
-/** Loads the demo in one transaction: all of it or nothing. */
-export async function loadDemo(database: Database, order: DemoOrder): Promise<DemoCounts> {
+/** Loads the demo in one transaction: all of it or nothing. Null: it was not empty and stays so. */
+export async function loadDemo(database: Database, order: DemoOrder): Promise<DemoCounts | null> {
+  if (order.onlyIfEmpty === true && !(await isEmpty(database.db))) {
+    return null;
+  }
   const demo = buildDemo(order);
   const { rows } = demo;
   await database.transact(async (tx) => {
@@ -58,7 +63,7 @@ export async function loadDemo(database: Database, order: DemoOrder): Promise<De
 
 const openStates = new Set(['draft', 'submitted', 'partly-booked']);
 
-async function isEmpty(tx: Tx): Promise<boolean> {
+async function isEmpty(tx: Reader): Promise<boolean> {
   const sites = await tx.select({ id: sitesTable.id }).from(sitesTable).limit(1);
   const persons = await tx.select({ id: personsTable.id }).from(personsTable).limit(1);
   return sites.length === 0 && persons.length === 0;
