@@ -2,7 +2,7 @@ import { systemClock } from '#server/clock.ts';
 import { connectDatabase } from '#server/db/client.ts';
 import { isDatabaseUnavailable } from '#server/db/db-errors.ts';
 import { defaultDemoSeed } from '#server/demo/build-demo.ts';
-import { DemoError, loadDemo } from '#server/demo/load-demo.ts';
+import { DemoError, isEmpty, loadDemo } from '#server/demo/load-demo.ts';
 import { findOwnerUrl } from './config.ts';
 
 /** `tsx server/cli/load-demo.ts [--force | --if-empty]` with the owner's address in DATABASE_OWNER_URL. */
@@ -21,15 +21,14 @@ async function main(args: readonly string[]): Promise<number> {
   }
   const database = connectDatabase({ url: ownerUrl, maxConnections: 1 });
   try {
+    if (args.includes('--if-empty') && !(await isEmpty(database.db))) {
+      return 0;
+    }
     const counts = await loadDemo(database, {
       seed: defaultDemoSeed,
       nowMs: systemClock.now().getTime(),
       force: args.includes('--force'),
-      onlyIfEmpty: args.includes('--if-empty'),
     });
-    if (counts === null) {
-      return 0;
-    }
     process.stdout.write(
       `Loaded Larkfen Cells: ${counts.instruments} instruments with ${counts.units} units, ${counts.cells} cells, ${counts.pastBookings} past and ${counts.futureBookings} current or future bookings, ${counts.openRequests} open requests.\n`,
     );

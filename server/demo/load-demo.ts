@@ -17,8 +17,6 @@ export type DemoOrder = {
   readonly nowMs: number;
   /** Empties the database first. */
   readonly force: boolean;
-  /** Leaves a database that holds something as it is, without calling that a failure. */
-  readonly onlyIfEmpty?: boolean;
 };
 export type DemoCounts = {
   readonly instruments: number;
@@ -29,7 +27,7 @@ export type DemoCounts = {
   readonly openRequests: number;
 };
 
-/** Loads the demo in one transaction: all of it or nothing. Null: it was not empty and stays so. */
+/** Loads the demo in one transaction: all of it or nothing. */
 export async function loadDemo(database: Database, order: DemoOrder): Promise<DemoCounts | null> {
   if (order.onlyIfEmpty === true && !(await isEmpty(database.db))) {
     return null;
@@ -63,7 +61,8 @@ export async function loadDemo(database: Database, order: DemoOrder): Promise<De
 
 const openStates = new Set(['draft', 'submitted', 'partly-booked']);
 
-async function isEmpty(tx: Reader): Promise<boolean> {
+/** Nobody and no site is in it yet. */
+export async function isEmpty(tx: Reader): Promise<boolean> {
   const sites = await tx.select({ id: sitesTable.id }).from(sitesTable).limit(1);
   const persons = await tx.select({ id: personsTable.id }).from(personsTable).limit(1);
   return sites.length === 0 && persons.length === 0;
