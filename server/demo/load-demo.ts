@@ -28,10 +28,7 @@ export type DemoCounts = {
 };
 
 /** Loads the demo in one transaction: all of it or nothing. */
-export async function loadDemo(database: Database, order: DemoOrder): Promise<DemoCounts | null> {
-  if (order.onlyIfEmpty === true && !(await isEmpty(database.db))) {
-    return null;
-  }
+export async function loadDemo(database: Database, order: DemoOrder): Promise<DemoCounts> {
   const demo = buildDemo(order);
   const { rows } = demo;
   await database.transact(async (tx) => {
