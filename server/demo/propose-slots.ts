@@ -24,14 +24,14 @@ export async function proposeSlots(
       horizonMs: demo.nowMs + policy.horizonDays * dayMs,
       nowMs: demo.nowMs,
     });
+    // On some days a request finds no slot; then there is nothing to wish for.
     const offer = offers.at(-1);
-    if (offer === undefined) {
-      throw new RangeError(`Request ${requestId} of the demo finds no slot to propose.`);
+    if (offer !== undefined) {
+      await tx
+        .update(requestsTable)
+        .set({ proposedOffer: toProposal(offer, lotId), proposedAt: new Date(demo.nowMs - hourMs) })
+        .where(eq(requestsTable.id, requestId));
     }
-    await tx
-      .update(requestsTable)
-      .set({ proposedOffer: toProposal(offer, lotId), proposedAt: new Date(demo.nowMs - hourMs) })
-      .where(eq(requestsTable.id, requestId));
   }
 }
 
