@@ -28,7 +28,7 @@ export async function listApprovedCalibrations(
       and(
         inArray(t.instrumentId, [...instrumentIds]),
         eq(t.state, 'approved'),
-        sql`${t.performedOn} >= (select min(older.performed_on) from ${t} older where older.instrument_id = ${t.instrumentId} and older.state = 'approved' and older.due_on >= ${sinceDay})`,
+        sql`${t.performedOn} >= (select min(older.performed_on) from ${t} older where older.instrument_id = calibration.instrument_id and older.state = 'approved' and older.due_on >= ${sinceDay})`,
       ),
     )
     .orderBy(asc(t.instrumentId), asc(t.performedOn), asc(t.id));

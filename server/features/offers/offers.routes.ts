@@ -1,0 +1,21 @@
+import { defineRoute } from '#server/http/define-route.ts';
+import * as contracts from '#shared/contracts/offers.contract.ts';
+import { checkPlacement } from './check-placement.service.ts';
+import { findOffers } from './offers.service.ts';
+
+export const offersRoutes = [
+  defineRoute(contracts.findOffers, ({ deps, actor, site, input }) =>
+    findOffers(deps, actor, site, {
+      requestId: input.params.id,
+      lotId: input.params.lotId,
+      ...input.query,
+    }),
+  ),
+  defineRoute(contracts.checkPlacement, ({ deps, actor, site, input }) =>
+    checkPlacement(deps, actor, site, {
+      requestId: input.params.id,
+      lotId: input.params.lotId,
+      ...input.body,
+    }),
+  ),
+];
