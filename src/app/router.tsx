@@ -17,7 +17,10 @@ function screen(pattern: string, load: () => Promise<Screen>): RouteObject {
   };
 }
 
-const screens: RouteObject[] = [screen(paths.find.pattern, () => import('./routes/find.tsx'))];
+const screens: RouteObject[] = [
+  screen(paths.board.pattern, () => import('./routes/board.tsx')),
+  screen(paths.find.pattern, () => import('./routes/find.tsx')),
+];
 
 export function createRouter() {
   return createBrowserRouter([

@@ -1,3 +1,4 @@
+import { board } from './en/board.ts';
 import { drawings } from './en/drawings.ts';
 import { gallery } from './en/gallery.ts';
 import { layout } from './en/layout.ts';
@@ -6,4 +7,4 @@ import { shell } from './en/shell.ts';
 import { ui } from './en/ui.ts';
 
 /** Every word the client shows; a feature adds one file in `en/` and one line here. */
-export const en = { drawings, gallery, layout, session, shell, ui } as const;
+export const en = { board, drawings, gallery, layout, session, shell, ui } as const;

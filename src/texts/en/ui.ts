@@ -1,4 +1,17 @@
+import type { CalibrationBadge } from '#shared/domain/states.ts';
+
+const badges: Record<CalibrationBadge, string> = {
+  'in-date': 'in date',
+  'due-soon': 'due soon',
+  overdue: 'overdue',
+  limited: 'limited',
+  'awaiting-release': 'awaiting release',
+  'out-of-service': 'out of service',
+  'not-calibrated': 'not calibrated',
+};
+
 export const ui = {
+  badges,
   loading: 'Loading.',
   loadingWhat: (what: string) => `Loading ${what}.`,
   nothing: 'Nothing here yet.',

@@ -1,0 +1,3 @@
+import { BoardPage } from '#src/features/board/components/board-page.tsx';
+
+export const Component = BoardPage;
