@@ -61,7 +61,7 @@ export function findFittingPaths(
   paths: readonly DemoPath[],
 ): readonly RangedPath[] {
   const [first] = paths;
-  const widest = first?.meter.ranges.at(-1);
+  const widest = first?.meter.ranges.findLast((range) => range.burdenOhm !== null);
   if (first === undefined || widest === undefined) {
     return [];
   }

@@ -64,7 +64,7 @@ function fillLane(tools: PlacingTools, lane: Lane): PlannedLoad[] {
 /** The desk fills up towards today and thins out ahead. */
 function gapFor(tools: PlacingTools, atMs: number): number {
   const days = (atMs - tools.nowMs) / dayMs;
-  const meanDays = days <= 0 ? 5.5 + (22 * -days) / pastDays : 1.8 + (11 * days) / futureDays;
+  const meanDays = days <= 0 ? 6.2 + (25 * -days) / pastDays : 2.1 + (12 * days) / futureDays;
   return -Math.log(1 - tools.dice.next()) * meanDays * dayMs;
 }
 
