@@ -18,6 +18,8 @@ function screen(pattern: string, load: () => Promise<Screen>): RouteObject {
 }
 
 const screens: RouteObject[] = [
+  screen(paths.equipment.pattern, () => import('./routes/equipment.tsx')),
+  screen(paths.instrument.pattern, () => import('./routes/instrument.tsx')),
   screen(paths.board.pattern, () => import('./routes/board.tsx')),
   screen(paths.find.pattern, () => import('./routes/find.tsx')),
 ];

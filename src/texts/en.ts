@@ -1,5 +1,6 @@
 import { board } from './en/board.ts';
 import { drawings } from './en/drawings.ts';
+import { equipment } from './en/equipment.ts';
 import { gallery } from './en/gallery.ts';
 import { layout } from './en/layout.ts';
 import { session } from './en/session.ts';
@@ -7,4 +8,4 @@ import { shell } from './en/shell.ts';
 import { ui } from './en/ui.ts';
 
 /** Every word the client shows; a feature adds one file in `en/` and one line here. */
-export const en = { board, drawings, gallery, layout, session, shell, ui } as const;
+export const en = { board, drawings, equipment, gallery, layout, session, shell, ui } as const;

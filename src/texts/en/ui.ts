@@ -1,4 +1,4 @@
-import type { CalibrationBadge } from '#shared/domain/states.ts';
+import type { BookingState, CalibrationBadge } from '#shared/domain/states.ts';
 
 const badges: Record<CalibrationBadge, string> = {
   'in-date': 'in date',
@@ -10,7 +10,17 @@ const badges: Record<CalibrationBadge, string> = {
   'not-calibrated': 'not calibrated',
 };
 
+const bookingStates: Record<BookingState, string> = {
+  tentative: 'tentative',
+  confirmed: 'confirmed',
+  running: 'running',
+  done: 'finished',
+  cancelled: 'cancelled',
+};
+
 export const ui = {
+  bookingStates,
+  atRisk: 'at risk',
   badges,
   loading: 'Loading.',
   loadingWhat: (what: string) => `Loading ${what}.`,

@@ -1,0 +1,3 @@
+import { EquipmentPage } from '#src/features/equipment/components/equipment-page.tsx';
+
+export const Component = EquipmentPage;
