@@ -39,6 +39,7 @@ export const problems = {
   'file.too-large': { status: 413, title: 'The file is too large' },
   'file.incomplete': { status: 409, title: 'The file has not arrived whole' },
   'person.self': { status: 409, title: 'This cannot be done to yourself' },
+  'person.claim': { status: 409, title: 'This role is managed by the identity provider' },
 } as const satisfies Record<string, ProblemDefinition>;
 
 export type ProblemCode = keyof typeof problems;

@@ -1,4 +1,8 @@
-import { problemSchema, type ProblemCode, type ProblemDocument } from '#shared/contracts/problems.ts';
+import {
+  problemSchema,
+  type ProblemCode,
+  type ProblemDocument,
+} from '#shared/contracts/problems.ts';
 
 /** What `callApi` throws: the server's problem document, or one made here when no answer came. */
 export class ProblemError extends Error {

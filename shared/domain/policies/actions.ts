@@ -17,6 +17,7 @@ export const actions = [
   'request.edit',
   'request.withdraw',
   'request.decline',
+  'request.prioritise',
   'request.propose',
   'booking.confirm',
   'booking.move',

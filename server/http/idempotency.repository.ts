@@ -1,0 +1,34 @@
+import { and, eq } from 'drizzle-orm';
+import type { Tx } from '#server/db/client.ts';
+import { idempotencyKeysTable } from '#server/db/tables/idempotency-key.table.ts';
+import type { Answer, KeyedCall } from './idempotency.ts';
+
+/** False where the key is taken; waits for another transaction that is just taking it. */
+export async function claimKey(tx: Tx, call: KeyedCall): Promise<boolean> {
+  const { at: createdAt, ...row } = call;
+  const claimed = await tx
+    .insert(idempotencyKeysTable)
+    .values({ ...row, createdAt })
+    .onConflictDoNothing()
+    .returning({ key: idempotencyKeysTable.key });
+  return claimed.length === 1;
+}
+
+export async function storeAnswer(tx: Tx, call: KeyedCall, answer: Answer): Promise<void> {
+  await tx
+    .update(idempotencyKeysTable)
+    .set({ status: answer.status, response: answer.body })
+    .where(sameKey(call));
+}
+
+export async function findAnswer(tx: Tx, call: KeyedCall) {
+  const [row] = await tx.select().from(idempotencyKeysTable).where(sameKey(call));
+  return row;
+}
+
+function sameKey(call: KeyedCall) {
+  return and(
+    eq(idempotencyKeysTable.personId, call.personId),
+    eq(idempotencyKeysTable.key, call.key),
+  );
+}

@@ -1,0 +1,23 @@
+import { auditRoutes } from './features/audit/audit.routes.ts';
+import { bookingsRoutes } from './features/bookings/bookings.routes.ts';
+import { filesRoutes } from './features/files/files.routes.ts';
+import { healthRoutes } from './features/health/health.routes.ts';
+import { loadsRoutes } from './features/loads/loads.routes.ts';
+import { offersRoutes } from './features/offers/offers.routes.ts';
+import { peopleRoutes } from './features/people/people.routes.ts';
+import { sessionRoutes } from './features/session/session.routes.ts';
+import { settingsRoutes } from './features/settings/settings.routes.ts';
+import type { Route } from './http/define-route.ts';
+
+/** The routes of every feature; a contract that is missing here fails the completeness test. */
+export const allRoutes: readonly Route[] = [
+  ...auditRoutes,
+  ...bookingsRoutes,
+  ...filesRoutes,
+  ...healthRoutes,
+  ...loadsRoutes,
+  ...offersRoutes,
+  ...peopleRoutes,
+  ...sessionRoutes,
+  ...settingsRoutes,
+];
