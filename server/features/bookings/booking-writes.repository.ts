@@ -234,22 +234,30 @@ export async function countBookedLots(tx: Tx, requestId: number) {
   return row ?? { lots: 0, booked: 0 };
 }
 
+/** Only a request that is being worked on follows its lots; a withdrawn or finished one stays so. */
 export async function updateRequestState(
   tx: Tx,
   requestId: number,
   state: RequestState,
   at: Date,
 ): Promise<void> {
+  const isAnswered = sql`exists (select from booking b where b.state <> 'cancelled' and b.lot_id = (request.proposed_offer ->> 'lotId')::int)`;
   await tx
     .update(requestsTable)
     .set({
       state,
       updatedAt: at,
       version: sql`${requestsTable.version} + 1`,
-      // Once booked, the wish for a slot is answered.
-      ...(state === 'booked' ? { proposedOffer: null, proposedAt: null } : {}),
+      // Once its lot is booked, the wish for a slot is answered.
+      proposedOffer: sql`case when ${isAnswered} then null else proposed_offer end`,
+      proposedAt: sql`case when ${isAnswered} then null else proposed_at end`,
     })
-    .where(eq(requestsTable.id, requestId));
+    .where(
+      and(
+        eq(requestsTable.id, requestId),
+        inArray(requestsTable.state, ['submitted', 'partly-booked', 'booked']),
+      ),
+    );
 }
 
 /** A live booking of one of the cells that touches the span. */

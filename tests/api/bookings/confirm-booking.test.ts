@@ -164,7 +164,7 @@ test('cells still on their way make the booking tentative until the no-show time
   expect(booking.checks.find(({ code }) => code === 'cells-received')?.outcome).toBe('caution');
 });
 
-test('a second lot makes the request booked; until then it is partly booked', async () => {
+test('with one of two lots booked a request is partly booked, and the wish for that lot answered', async () => {
   const made = await bench.request();
   await bench.app.db.insert(requestLotsTable).values({
     requestId: made.requestId,
@@ -172,8 +172,16 @@ test('a second lot makes the request booked; until then it is partly booked', as
     cellTypeId: bench.cellTypeId,
     cellCount: 1,
   });
+  await bench.app.db
+    .update(requestsTable)
+    .set({ proposedOffer: { lotId: made.lotId }, proposedAt: new Date('2026-03-01T09:00:00Z') })
+    .where(eq(requestsTable.id, made.requestId));
   await bench.book(made);
-  expect(await stateOf(made.requestId)).toBe('partly-booked');
+  const [row] = await bench.app.db
+    .select()
+    .from(requestsTable)
+    .where(eq(requestsTable.id, made.requestId));
+  expect(row).toMatchObject({ state: 'partly-booked', proposedOffer: null, proposedAt: null });
 });
 
 test('a lot is booked once, and an edited request is looked at again first', async () => {
