@@ -39,6 +39,8 @@ type Options = Replacements & {
   readonly environment?: Readonly<Record<string, string>>;
   readonly routes?: readonly Route[];
   readonly clientFolder?: string;
+  /** Any free one by itself. */
+  readonly port?: number;
 };
 
 /**
@@ -46,7 +48,7 @@ type Options = Replacements & {
  * The clock stands still at 2026-03-02 08:00 UTC, a Monday, until a test moves it.
  */
 export async function startTestApp(options: Options = {}) {
-  const { environment = {}, routes, clientFolder, ...replacements } = options;
+  const { environment = {}, routes, clientFolder, port: wantedPort = 0, ...replacements } = options;
   const testDatabase = await createTestDatabase();
   const clock = createTestClock();
   const config = testConfig({ DATABASE_URL: testDatabase.url, ...environment });
@@ -60,7 +62,7 @@ export async function startTestApp(options: Options = {}) {
     ...(routes === undefined ? {} : { routes }),
     ...(clientFolder === undefined ? {} : { clientFolder }),
   });
-  const server = createServer(app).listen(0, '127.0.0.1');
+  const server = createServer(app).listen(wantedPort, '127.0.0.1');
   await once(server, 'listening');
   const { port } = z.object({ port: z.number() }).parse(server.address());
   const url = `http://127.0.0.1:${port}`;
