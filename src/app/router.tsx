@@ -21,6 +21,9 @@ const screens: RouteObject[] = [
   screen(paths.equipment.pattern, () => import('./routes/equipment.tsx')),
   screen(paths.instrument.pattern, () => import('./routes/instrument.tsx')),
   screen(paths.board.pattern, () => import('./routes/board.tsx')),
+  screen(paths.bookings.pattern, () => import('./routes/bookings.tsx')),
+  screen(paths.booking.pattern, () => import('./routes/booking.tsx')),
+  screen(paths.load.pattern, () => import('./routes/load.tsx')),
   screen(paths.find.pattern, () => import('./routes/find.tsx')),
 ];
 

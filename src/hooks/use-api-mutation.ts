@@ -3,6 +3,7 @@ import { useRef } from 'react';
 import type { z } from 'zod';
 import type { Contract } from '#shared/contracts/define-contract.ts';
 import { callApi, type ApiInput } from '#src/lib/call-api.ts';
+import { isProblem } from '#src/lib/problem.ts';
 
 /**
  * A change through its contract. One idempotency key is kept from the first try until it succeeds or
@@ -23,6 +24,12 @@ export function useApiMutation<
 ) {
   const client = useQueryClient();
   const attempt = useRef<{ key: string; input: string } | null>(null);
+  const refresh = async () => {
+    const paths = new Set((options.refreshes ?? []).map((each) => each.path));
+    await client.invalidateQueries({
+      predicate: (query) => paths.has(String(query.queryKey[0])),
+    });
+  };
   return useMutation({
     mutationFn: (input: ApiInput<P, Q, B>) => {
       const said = JSON.stringify([input.params, input.query, input.body]);
@@ -34,10 +41,13 @@ export function useApiMutation<
     onSuccess: async (answer) => {
       attempt.current = null;
       options.onDone?.(answer);
-      const paths = new Set((options.refreshes ?? []).map((each) => each.path));
-      await client.invalidateQueries({
-        predicate: (query) => paths.has(String(query.queryKey[0])),
-      });
+      await refresh();
+    },
+    onError: async (error) => {
+      // A conflict means that the page shows something that is no longer so.
+      if (isProblem(error) && error.document.status === 409) {
+        await refresh();
+      }
     },
   });
 }

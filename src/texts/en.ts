@@ -1,4 +1,5 @@
 import { board } from './en/board.ts';
+import { bookings } from './en/bookings.ts';
 import { drawings } from './en/drawings.ts';
 import { equipment } from './en/equipment.ts';
 import { gallery } from './en/gallery.ts';
@@ -8,4 +9,14 @@ import { shell } from './en/shell.ts';
 import { ui } from './en/ui.ts';
 
 /** Every word the client shows; a feature adds one file in `en/` and one line here. */
-export const en = { board, drawings, equipment, gallery, layout, session, shell, ui } as const;
+export const en = {
+  board,
+  bookings,
+  drawings,
+  equipment,
+  gallery,
+  layout,
+  session,
+  shell,
+  ui,
+} as const;

@@ -48,6 +48,7 @@ export const ui = {
   theme: 'Look',
   themes: { system: 'As the system', light: 'Light', dark: 'Dark' },
   filters: 'Filters',
+  order: 'Order',
   clearFilters: 'Clear the filters',
   today: 'today',
   tomorrow: 'tomorrow',

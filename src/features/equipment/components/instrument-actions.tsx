@@ -18,7 +18,7 @@ import { Field } from '#src/components/ui/field.tsx';
 import { DateTimeInput, TextArea } from '#src/components/ui/input.tsx';
 import { useApiMutation } from '#src/hooks/use-api-mutation.ts';
 import { useMay, useSite } from '#src/hooks/use-site.ts';
-import { isProblem } from '#src/lib/problem.ts';
+import { errorText } from '#src/lib/error-text.ts';
 import { fromSiteInput, type SiteTimeReading } from '#src/lib/site-time.ts';
 import { t } from '#src/texts/t.ts';
 
@@ -35,13 +35,6 @@ const refreshes = [
   getWaterline,
   listDuties,
 ];
-
-function errorText(error: unknown): string | undefined {
-  if (error === null || error === undefined) {
-    return undefined;
-  }
-  return isProblem(error) ? error.document.detail : t.ui.failedTitle;
-}
 
 const texts = {
   'take-out': {

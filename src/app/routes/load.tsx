@@ -1,0 +1,3 @@
+import { LoadPage } from '#src/features/bookings/components/load-page.tsx';
+
+export const Component = LoadPage;
