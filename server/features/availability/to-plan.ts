@@ -39,7 +39,7 @@ export function toUnavailable(
   const span: Span = { startMs: row.startsAt.getTime(), endMs: row.endsAt?.getTime() ?? openEndMs };
   const until =
     row.endsAt === null ? 'end not known' : `until ${formatSiteTime(calendar, span.endMs)}`;
-  const label = `${row.note}, ${until}`;
+  const label = `${row.note.replace(/[.;,\s]+$/, '')}; ${until}`;
   return unitIds.map((unitId) => ({
     unitId,
     ...span,

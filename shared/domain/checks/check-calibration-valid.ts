@@ -64,13 +64,21 @@ function describeFailure(thing: Calibrated, facts: PlacementFacts): string {
   const name = `${thing.tag} ${thing.what}`;
   const untilMs = validUntil(thing.validity, facts.span.startMs);
   if (untilMs === null) {
-    return `${name} is not validly calibrated at the start of the slot.`;
+    return describeLapse(name, thing, facts);
   }
   const dueOn = thing.validity.find((span) => span.endMs === untilMs)?.dueOn ?? null;
   const end = formatSiteTime(facts.index.calendar, facts.span.endMs);
   return dueOn === null
     ? `The calibration of ${name} ends ${formatSiteTime(facts.index.calendar, untilMs)}; the slot ends ${end}.`
     : `${name} is due ${formatSiteDay(dueOn)}; the slot ends ${end}.`;
+}
+
+function describeLapse(name: string, thing: Calibrated, facts: PlacementFacts): string {
+  const lapsed = thing.validity.findLast((span) => span.endMs <= facts.span.startMs);
+  const dueOn = lapsed?.dueOn ?? null;
+  return dueOn === null
+    ? `${name} is not validly calibrated at the start of the slot.`
+    : `${name} is due ${formatSiteDay(dueOn)}, before the slot starts ${formatSiteTime(facts.index.calendar, facts.span.startMs)}.`;
 }
 
 function describeValidity(thing: Calibrated, facts: PlacementFacts): Evidence {

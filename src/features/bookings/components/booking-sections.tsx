@@ -43,6 +43,7 @@ export function PhaseTable(props: {
         phases={barPhases(props.phases, props.holdLikelyEndAt)}
         label={words.phasesLabel(formatSpan(first.startAt, last.endAt, format))}
       />
+      <div className="mt-4" />
       <Table
         caption={words.phases}
         rows={props.phases}

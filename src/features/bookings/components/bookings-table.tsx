@@ -20,6 +20,7 @@ export function BookingsTable(props: Rest & { caption: string }) {
   return (
     <Table
       {...props}
+      stack
       rowKey={(row) => row.id}
       rowState={(row) => (row.state === 'cancelled' || row.state === 'done' ? 'past' : undefined)}
       columns={[
