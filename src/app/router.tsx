@@ -24,6 +24,9 @@ const screens: RouteObject[] = [
   screen(paths.bookings.pattern, () => import('./routes/bookings.tsx')),
   screen(paths.booking.pattern, () => import('./routes/booking.tsx')),
   screen(paths.load.pattern, () => import('./routes/load.tsx')),
+  screen(paths.metrology.pattern, () => import('./routes/metrology.tsx')),
+  screen(paths.newCalibration.pattern, () => import('./routes/new-calibration.tsx')),
+  screen(paths.calibration.pattern, () => import('./routes/calibration.tsx')),
   screen(paths.find.pattern, () => import('./routes/find.tsx')),
 ];
 

@@ -66,6 +66,16 @@ async function readJson(response: Response): Promise<unknown> {
   }
 }
 
+/** A file travels as it is; everything else as JSON. */
+function sentBody(body: unknown): { type: string; content: string | Blob } | undefined {
+  if (body === undefined) {
+    return undefined;
+  }
+  return body instanceof Uint8Array
+    ? { type: 'application/octet-stream', content: new Blob([new Uint8Array(body)]) }
+    : { type: 'application/json', content: JSON.stringify(body) };
+}
+
 /** Calls one endpoint, checks the answer against its contract and throws `ProblemError` otherwise. */
 export async function callApi<
   P extends z.ZodType,
@@ -80,8 +90,9 @@ export async function callApi<
   if (contract.idempotent) {
     headers.set('idempotency-key', input.idempotencyKey ?? crypto.randomUUID());
   }
-  if (input.body !== undefined) {
-    headers.set('content-type', 'application/json');
+  const body = sentBody(input.body);
+  if (body !== undefined) {
+    headers.set('content-type', body.type);
   }
   let response: Response;
   try {
@@ -89,7 +100,7 @@ export async function callApi<
       method: contract.method,
       headers,
       credentials: 'same-origin',
-      ...(input.body === undefined ? {} : { body: JSON.stringify(input.body) }),
+      ...(body === undefined ? {} : { body: body.content }),
       ...(input.signal ? { signal: input.signal } : {}),
     });
   } catch (error) {
@@ -98,9 +109,9 @@ export async function callApi<
     }
     throw unreachable();
   }
-  const body = await readJson(response);
+  const answer = await readJson(response);
   if (!response.ok) {
-    throw readProblem(response.status, body);
+    throw readProblem(response.status, answer);
   }
-  return contract.response.parse(body);
+  return contract.response.parse(answer);
 }

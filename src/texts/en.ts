@@ -4,6 +4,7 @@ import { drawings } from './en/drawings.ts';
 import { equipment } from './en/equipment.ts';
 import { gallery } from './en/gallery.ts';
 import { layout } from './en/layout.ts';
+import { metrology } from './en/metrology.ts';
 import { session } from './en/session.ts';
 import { shell } from './en/shell.ts';
 import { ui } from './en/ui.ts';
@@ -16,6 +17,7 @@ export const en = {
   equipment,
   gallery,
   layout,
+  metrology,
   session,
   shell,
   ui,

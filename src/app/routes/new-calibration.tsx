@@ -1,0 +1,3 @@
+import { RecordPage } from '#src/features/metrology/components/record-page.tsx';
+
+export const Component = RecordPage;
