@@ -27,6 +27,9 @@ const screens: RouteObject[] = [
   screen(paths.metrology.pattern, () => import('./routes/metrology.tsx')),
   screen(paths.newCalibration.pattern, () => import('./routes/new-calibration.tsx')),
   screen(paths.calibration.pattern, () => import('./routes/calibration.tsx')),
+  screen(paths.settings.pattern, () => import('./routes/settings.tsx')),
+  screen(paths.help.pattern, () => import('./routes/help.tsx')),
+  screen(paths.marks.pattern, () => import('./routes/marks.tsx')),
   screen(paths.find.pattern, () => import('./routes/find.tsx')),
 ];
 

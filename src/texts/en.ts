@@ -3,9 +3,11 @@ import { bookings } from './en/bookings.ts';
 import { drawings } from './en/drawings.ts';
 import { equipment } from './en/equipment.ts';
 import { gallery } from './en/gallery.ts';
+import { help } from './en/help.ts';
 import { layout } from './en/layout.ts';
 import { metrology } from './en/metrology.ts';
 import { session } from './en/session.ts';
+import { settings } from './en/settings.ts';
 import { shell } from './en/shell.ts';
 import { ui } from './en/ui.ts';
 
@@ -16,9 +18,11 @@ export const en = {
   drawings,
   equipment,
   gallery,
+  help,
   layout,
   metrology,
   session,
+  settings,
   shell,
   ui,
 } as const;

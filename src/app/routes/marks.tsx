@@ -1,0 +1,3 @@
+import { GalleryPage } from '#src/features/gallery/components/gallery-page.tsx';
+
+export const Component = GalleryPage;
