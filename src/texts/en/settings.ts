@@ -50,6 +50,7 @@ export const settings = {
   exceptionReason: 'Why it differs',
   addException: 'Add a day',
   removeException: 'Take out',
+  editHours: 'Change the hours',
   saveHours: 'Save the hours',
   hoursSaved: 'The working hours are saved. Slots offered from now on follow them.',
   people: 'People and roles',
@@ -80,6 +81,7 @@ export const settings = {
   action: 'What',
   sealed: (no: number) => `sealed as ${no}`,
   unsealed: 'to be sealed in seconds',
+  show: 'Show',
   old: 'Old',
   new: 'New',
 } as const;

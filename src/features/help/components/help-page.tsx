@@ -64,7 +64,7 @@ export function HelpPage() {
       }
     >
       <Section title={words.caution}>
-        <div className="mp-stack max-w-[86ch]">
+        <div className="max-w-[100ch]">
           {words.cautions.map((caution) => (
             <Notice key={caution} kind="caution">
               {caution}

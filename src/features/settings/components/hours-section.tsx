@@ -15,9 +15,10 @@ import { Field } from '#src/components/ui/field.tsx';
 import { TextInput } from '#src/components/ui/input.tsx';
 import { Notice } from '#src/components/ui/notice.tsx';
 import { useApiMutation } from '#src/hooks/use-api-mutation.ts';
+import { useNow } from '#src/hooks/use-now.ts';
 import { useMay, useSite } from '#src/hooks/use-site.ts';
 import { errorText } from '#src/lib/error-text.ts';
-import { formatDay } from '#src/lib/format-date.ts';
+import { formatDay, siteCalendar } from '#src/lib/format-date.ts';
 import { tableError } from '#src/lib/table-error.ts';
 import { t } from '#src/texts/t.ts';
 import { workingHoursQuery } from '../api/settings-queries.ts';
@@ -30,8 +31,16 @@ function shown(text: string): string {
   return text === '' ? words.closed : text;
 }
 
-function Reading(props: { hours: WorkingHoursDto }) {
+/** Days that are over change nothing any more; they stay stored and are not shown. */
+function useDaysAhead(): (entry: { readonly day: string }) => boolean {
+  const site = useSite();
+  const { today } = siteCalendar(useNow(), site.zone);
+  return (entry) => entry.day === '' || entry.day >= today;
+}
+
+function Reading(props: { hours: WorkingHoursDto; onEdit: (() => void) | undefined }) {
   const { hours } = props;
+  const ahead = hours.exceptions.filter(useDaysAhead());
   return (
     <>
       <FactList
@@ -42,16 +51,21 @@ function Reading(props: { hours: WorkingHoursDto }) {
         }))}
       />
       <h3 className="mt-4">{words.exceptions}</h3>
-      {hours.exceptions.length === 0 ? (
+      {ahead.length === 0 ? (
         <p className="mp-note">{words.noExceptions}</p>
       ) : (
         <FactList
           columns={2}
-          facts={hours.exceptions.map((entry) => ({
+          facts={ahead.map((entry) => ({
             name: formatDay(entry.day),
             value: `${shown(writeSpans(entry.hours))}, ${entry.reason}`,
           }))}
         />
+      )}
+      {props.onEdit === undefined ? null : (
+        <div className="mp-acts mt-4">
+          <Button onClick={props.onEdit}>{words.editHours}</Button>
+        </div>
       )}
     </>
   );
@@ -70,11 +84,12 @@ function draftOf(hours: WorkingHoursDto): HoursDraft {
   };
 }
 
-function useHoursForm(hours: WorkingHoursDto) {
+function useHoursForm(hours: WorkingHoursDto, onDone: () => void) {
   const site = useSite();
   const [draft, setDraft] = useState(() => draftOf(hours));
   const save = useApiMutation(setWorkingHours, {
     refreshes: [getWorkingHours, findOffers, getBoard, getToday],
+    onDone,
   });
   const weekly = draft.week.map(readSpans);
   const exceptions = draft.days.map((entry) => ({ ...entry, hours: readSpans(entry.hours) }));
@@ -99,8 +114,11 @@ function useHoursForm(hours: WorkingHoursDto) {
   };
 }
 
-function Editing(props: { hours: WorkingHoursDto }) {
-  const form = useHoursForm(props.hours);
+function Editing(props: { hours: WorkingHoursDto; onClose: (isSaved: boolean) => void }) {
+  const form = useHoursForm(props.hours, () => {
+    props.onClose(true);
+  });
+  const isAhead = useDaysAhead();
   const { draft, setDraft, save } = form;
   const failure = errorText(save.error);
   return (
@@ -122,9 +140,10 @@ function Editing(props: { hours: WorkingHoursDto }) {
       ))}
       <h3 className="mt-4">{words.exceptions}</h3>
       <ExceptionRows
-        rows={draft.days}
+        rows={draft.days.filter(isAhead)}
         onChange={(days) => {
-          setDraft({ ...draft, days });
+          const past = draft.days.filter((entry) => !isAhead(entry));
+          setDraft({ ...draft, days: [...past, ...days] });
         }}
       />
       {failure === undefined ? null : (
@@ -132,11 +151,6 @@ function Editing(props: { hours: WorkingHoursDto }) {
           {failure}
         </Notice>
       )}
-      {save.isSuccess ? (
-        <Notice kind="pass" role="status">
-          {words.hoursSaved}
-        </Notice>
-      ) : null}
       <div className="mp-acts mt-3">
         <Button
           kind="primary"
@@ -145,6 +159,14 @@ function Editing(props: { hours: WorkingHoursDto }) {
           onClick={form.send}
         >
           {words.saveHours}
+        </Button>
+        <Button
+          kind="link"
+          onClick={() => {
+            props.onClose(false);
+          }}
+        >
+          {words.keep}
         </Button>
       </div>
     </>
@@ -156,15 +178,29 @@ export function HoursSection() {
   const site = useSite();
   const may = useMay();
   const query = useQuery(workingHoursQuery(site.code));
+  const [stage, setStage] = useState<'reading' | 'editing' | 'saved'>('reading');
   const failure = tableError(query);
+  const edit = () => {
+    setStage('editing');
+  };
   return (
     <Section title={words.hours} note={<p>{words.hoursNote(site.zone)}</p>}>
       {failure === undefined ? null : <ErrorState {...failure} />}
       {query.isPending ? <Loading what={words.hours} /> : null}
-      {query.data === undefined ? null : may('policy.edit') ? (
-        <Editing hours={query.data} />
+      {stage === 'saved' ? (
+        <Notice kind="pass" role="status">
+          {words.hoursSaved}
+        </Notice>
+      ) : null}
+      {query.data === undefined ? null : stage === 'editing' ? (
+        <Editing
+          hours={query.data}
+          onClose={(isSaved) => {
+            setStage(isSaved ? 'saved' : 'reading');
+          }}
+        />
       ) : (
-        <Reading hours={query.data} />
+        <Reading hours={query.data} onEdit={may('policy.edit') ? edit : undefined} />
       )}
     </Section>
   );

@@ -18,7 +18,8 @@ const words = t.settings;
 function Change(props: { event: AuditEventDto }) {
   const { before, after, sealNo } = props.event;
   return (
-    <Disclosure summary={sealNo === null ? words.unsealed : words.sealed(sealNo)}>
+    <Disclosure summary={words.show}>
+      <p className="mp-note">{sealNo === null ? words.unsealed : words.sealed(sealNo)}</p>
       {[
         { name: words.old, value: before },
         { name: words.new, value: after },
