@@ -4,6 +4,14 @@ const loopback = /^(127\.0\.0\.1|localhost|\[::1\])$/;
 const webAddress = z.url({ protocol: /^https?$/, error: 'must be an http or https address' });
 const flag = z.enum(['true', 'false'], { error: 'must be true or false' }).default('false');
 
+function seconds(fallback: number) {
+  return z.coerce
+    .number({ error: 'must be a number of seconds' })
+    .min(0.5, 'must be at least 0.5')
+    .max(3600, 'must be at most 3600')
+    .default(fallback);
+}
+
 const demoPersonSchema = z.strictObject({
   sub: z.string().min(1),
   name: z.string().min(1),
@@ -73,6 +81,9 @@ export const environmentSchema = z.object({
     .url({ protocol: /^smtps?$/, error: 'must be an smtp:// or smtps:// address' })
     .describe('mail server that takes outgoing mail'),
   MAIL_FROM: z.email({ error: 'must be a mail address' }).describe('sender of every mail'),
+  MAIL_PATIENCE_S: seconds(60).describe(
+    'seconds the mail server may take over one mail before it is given up and tried again',
+  ),
   MAIL_STAND_IN_URL: webAddress
     .optional()
     .describe('where the mail stand-in shows what was sent; leave empty outside a demo'),
@@ -80,6 +91,9 @@ export const environmentSchema = z.object({
     .url({ protocol: /^rediss?$/, error: 'must be a redis:// address' })
     .optional()
     .describe('carries the job queue in Redis; without it the queue lives in PostgreSQL'),
+  JOB_LOCK_S: seconds(30).describe(
+    'seconds after which the job of a worker that gives no sign of life goes to another',
+  ),
   LOG_LEVEL: z
     .enum(['fatal', 'error', 'warn', 'info', 'debug', 'silent'])
     .default('info')
@@ -112,8 +126,10 @@ export type Config = {
   readonly mail: {
     readonly smtpUrl: string;
     readonly from: string;
+    readonly patienceMs: number;
     readonly standInUrl: string | null;
   };
+  readonly jobs: { readonly lockMs: number };
   readonly redisUrl: string | null;
 };
 
@@ -167,8 +183,10 @@ function freeze(values: z.infer<typeof environmentSchema>): Config {
     mail: Object.freeze({
       smtpUrl: values.SMTP_URL,
       from: values.MAIL_FROM,
+      patienceMs: values.MAIL_PATIENCE_S * 1000,
       standInUrl: values.MAIL_STAND_IN_URL ?? null,
     }),
+    jobs: Object.freeze({ lockMs: values.JOB_LOCK_S * 1000 }),
     redisUrl: values.REDIS_URL ?? null,
   });
 }
