@@ -47,6 +47,10 @@ export function connectDatabase(options: DatabaseOptions): Database {
     idle_in_transaction_session_timeout: 60_000,
   });
   pool.on('error', (error) => options.onIdleError?.(error));
+  pool.on('connect', (client) => {
+    // One that breaks while a transaction has it fails that transaction; unheard, it would end the process.
+    client.on('error', () => undefined);
+  });
   const db: Db = drizzle(pool);
   let retries = 0;
 
