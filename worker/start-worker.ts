@@ -2,6 +2,7 @@ import { buildDeps } from '#server/deps.ts';
 import type { Replacements } from '#server/deps.ts';
 import type { Config } from '#server/config.ts';
 import { listenTo } from '#server/db/listen.ts';
+import { sealTrail } from '#server/features/audit/seal-trail.service.ts';
 import { relayOutbox } from '#server/features/outbox/relay-outbox.service.ts';
 import { listSites } from '#server/features/settings/settings.service.ts';
 import { openBullmqBackend } from '#server/jobs/bullmq-backend.ts';
@@ -52,6 +53,11 @@ export async function startWorker(
     run: () => relayOutbox(deps, queue),
     onError: warn('the outbox could not be relayed'),
   });
+  const seal = repeat({
+    everyMs: sweepMs,
+    run: () => sealTrail(deps),
+    onError: warn('the audit trail could not be sealed'),
+  });
   const listening = listenTo({
     url: config.database.url,
     channel: outboxChannel,
@@ -64,7 +70,7 @@ export async function startWorker(
 
   return {
     async stop() {
-      await Promise.all([listening.close(), relay.stop(), plan.stop()]);
+      await Promise.all([listening.close(), relay.stop(), seal.stop(), plan.stop()]);
       await jobs.close(false);
       await queue.close();
       await close();
