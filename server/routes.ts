@@ -1,5 +1,7 @@
 import { auditRoutes } from './features/audit/audit.routes.ts';
+import { boardRoutes } from './features/board/board.routes.ts';
 import { bookingsRoutes } from './features/bookings/bookings.routes.ts';
+import { equipmentRoutes } from './features/equipment/equipment.routes.ts';
 import { filesRoutes } from './features/files/files.routes.ts';
 import { healthRoutes } from './features/health/health.routes.ts';
 import { loadsRoutes } from './features/loads/loads.routes.ts';
@@ -12,7 +14,9 @@ import type { Route } from './http/define-route.ts';
 /** The routes of every feature; a contract that is missing here fails the completeness test. */
 export const allRoutes: readonly Route[] = [
   ...auditRoutes,
+  ...boardRoutes,
   ...bookingsRoutes,
+  ...equipmentRoutes,
   ...filesRoutes,
   ...healthRoutes,
   ...loadsRoutes,

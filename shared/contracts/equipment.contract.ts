@@ -34,7 +34,8 @@ export const instrumentRowSchema = z.object({
   serial: z.string(),
   roomName: z.string().nullable(),
   state: z.enum(instrumentStates),
-  badge: z.enum(calibrationBadges),
+  /** Null where nothing on it has to be calibrated. */
+  badge: z.enum(calibrationBadges).nullable(),
   dueOn: calendarDay.nullable(),
   channelCount: z.int(),
   custodian: personRef.nullable(),

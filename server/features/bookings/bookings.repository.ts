@@ -54,6 +54,16 @@ export async function listBookingsOfLoad(reader: Reader, loadId: number) {
   return bookingRows(reader).where(eq(t.loadId, loadId)).orderBy(asc(t.id));
 }
 
+export async function listBookingsByIds(
+  reader: Reader,
+  siteId: number,
+  bookingIds: readonly number[],
+) {
+  return bookingRows(reader)
+    .where(and(eq(t.siteId, siteId), inArray(t.id, [...bookingIds])))
+    .orderBy(asc(sql`lower(${t.during})`), asc(t.id));
+}
+
 export async function findLiveBookingOfLot(reader: Reader, lotId: number) {
   const [row] = await reader
     .select({ id: t.id })

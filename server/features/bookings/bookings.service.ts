@@ -20,6 +20,7 @@ import {
   findPersonName,
   listBookingPaths,
   listBookingRecords,
+  listBookingsByIds,
   listBookingsOfLoad,
   listConfirmedChecks,
   listDeviationsOf,
@@ -133,6 +134,17 @@ export async function listBookingRowsOfLoad(
   loadId: number,
 ): Promise<BookingRow[]> {
   const records = await listBookingsOfLoad(deps.db, loadId);
+  return records.map((record) => presentBookingRow(record, isBookingVisible(actor, site, record)));
+}
+
+/** Bookings by number as the caller may see them, e.g. those a change has touched. */
+export async function listBookingRows(
+  deps: Reading,
+  actor: SignedIn,
+  site: SiteScope,
+  bookingIds: readonly number[],
+): Promise<BookingRow[]> {
+  const records = await listBookingsByIds(deps.db, site.id, bookingIds);
   return records.map((record) => presentBookingRow(record, isBookingVisible(actor, site, record)));
 }
 

@@ -15,7 +15,10 @@ const looks: Record<CalibrationBadge, { mark: MarkName; tone: Tone }> = {
 };
 
 /** The calibration state with its mark and word, everywhere the same. */
-export function CalibrationState(props: { badge: CalibrationBadge }) {
+export function CalibrationState(props: { badge: CalibrationBadge | null }) {
+  if (props.badge === null) {
+    return <span className="mp-note">{t.ui.notToCalibrate}</span>;
+  }
   const { mark, tone } = looks[props.badge];
   return (
     <State mark={mark} tone={tone}>

@@ -22,6 +22,7 @@ export const ui = {
   bookingStates,
   atRisk: 'at risk',
   badges,
+  notToCalibrate: 'nothing to calibrate',
   loading: 'Loading.',
   loadingWhat: (what: string) => `Loading ${what}.`,
   nothing: 'Nothing here yet.',
