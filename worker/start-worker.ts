@@ -8,6 +8,8 @@ import { listSites } from '#server/features/settings/settings.service.ts';
 import { openBullmqBackend } from '#server/jobs/bullmq-backend.ts';
 import { createBullmqJobQueue } from '#server/jobs/bullmq-job-queue.ts';
 import { startBullmqWorker } from '#server/jobs/bullmq-job-worker.ts';
+import { prepareJob } from '#server/jobs/define-job.ts';
+import { sweepDueRemindersJob } from '#server/jobs/definitions/sweep-due-reminders.job.ts';
 import { planSchedules } from './plan-schedules.ts';
 import { repeat } from './repeat.ts';
 import { runJob } from './run-job.ts';
@@ -41,10 +43,19 @@ export async function startWorker(
     concurrency: 4,
     lockMs: config.jobs.lockMs,
   });
+  let isCaughtUp = false;
   const plan = repeat({
     everyMs: planMs,
     run: async () => {
-      await queue.plan(planSchedules(await listSites(deps)));
+      const sites = await listSites(deps);
+      await queue.plan(planSchedules(sites));
+      if (!isCaughtUp) {
+        // Planning moves a sweep that was missed to its next morning; this one is for today.
+        await queue.add(
+          sites.map(({ id }) => prepareJob(sweepDueRemindersJob, { siteId: id }, null)),
+        );
+        isCaughtUp = true;
+      }
     },
     onError: warn('the schedules could not be planned'),
   });
