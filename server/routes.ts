@@ -1,6 +1,7 @@
 import { auditRoutes } from './features/audit/audit.routes.ts';
 import { boardRoutes } from './features/board/board.routes.ts';
 import { bookingsRoutes } from './features/bookings/bookings.routes.ts';
+import { calibrationsRoutes } from './features/calibrations/calibrations.routes.ts';
 import { equipmentRoutes } from './features/equipment/equipment.routes.ts';
 import { filesRoutes } from './features/files/files.routes.ts';
 import { healthRoutes } from './features/health/health.routes.ts';
@@ -16,6 +17,7 @@ export const allRoutes: readonly Route[] = [
   ...auditRoutes,
   ...boardRoutes,
   ...bookingsRoutes,
+  ...calibrationsRoutes,
   ...equipmentRoutes,
   ...filesRoutes,
   ...healthRoutes,

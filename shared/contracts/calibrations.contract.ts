@@ -34,8 +34,9 @@ export const dutyRowSchema = z.object({
   kind: z.enum(['calibration']),
   scope: z.string(),
   badge: z.enum(calibrationBadges),
-  dueOn: calendarDay,
-  daysLeft: z.int(),
+  /** Null where it was never calibrated. */
+  dueOn: calendarDay.nullable(),
+  daysLeft: z.int().nullable(),
   intervalMonths: z.int(),
   custodian: personRef.nullable(),
   lastCalibrationId: recordNumber.nullable(),

@@ -19,6 +19,7 @@ export const metrology = {
     act: '',
   },
   actions: 'What to do',
+  never: 'not yet calibrated',
   months: (months: number) => `${months} months`,
   awaiting: 'Await the second signature',
   record: 'Record a calibration',

@@ -152,13 +152,13 @@ function useColumns(): readonly Column<DutyRow>[] {
       key: 'due',
       head: heads.due,
       mono: true,
-      cell: (row) => formatDay(row.dueOn, { currentYear }),
+      cell: (row) => (row.dueOn === null ? words.never : formatDay(row.dueOn, { currentYear })),
     },
     {
       key: 'left',
       head: heads.left,
       nowrap: true,
-      cell: (row) => formatRelativeDays(row.dueOn, today),
+      cell: (row) => (row.dueOn === null ? '' : formatRelativeDays(row.dueOn, today)),
     },
     {
       key: 'interval',
