@@ -20,12 +20,17 @@ import type { DigestRow, StandingItem } from './digests.repository.ts';
 
 type Sending = Pick<Deps, 'clock' | 'config' | 'log' | 'mail' | 'transact'>;
 
-/** `held`: somebody else is sending it now, or it was done with before. */
-export type SendOutcome = 'sent' | 'dropped' | 'held';
+/** `settled`: it was sent or dropped before. */
+export type SendOutcome = 'sent' | 'dropped' | 'settled';
 
 type Claim =
   | { readonly kind: 'mine'; readonly lease: Date; readonly mail: MailMessage }
-  | { readonly kind: 'not-mine'; readonly outcome: 'dropped' | 'held' };
+  | { readonly kind: 'not-mine'; readonly outcome: 'dropped' | 'settled' };
+
+/** Another worker sends it now, or died over it: to be tried again when its lease has run out. */
+export class DigestHeldError extends Error {
+  override readonly name = 'DigestHeldError';
+}
 
 /**
  * Sends one digest, read afresh. Its row is leased for longer than the mail server is given time, so
@@ -60,8 +65,11 @@ async function claimDigest(deps: Sending, tx: Tx, digestId: number): Promise<Cla
     throw new PoisonJobError(`There is no digest ${digestId}.`);
   }
   const now = deps.clock.now();
-  if (!isFree(digest, now)) {
-    return { kind: 'not-mine', outcome: 'held' };
+  if (digest.state === 'sent' || digest.state === 'dropped') {
+    return { kind: 'not-mine', outcome: 'settled' };
+  }
+  if (isHeld(digest, now)) {
+    throw new DigestHeldError(`Digest ${digestId} is being sent by another worker.`);
   }
   const { person, site } = digest;
   const items = await listOwnItems(tx, digest);
@@ -84,8 +92,8 @@ async function claimDigest(deps: Sending, tx: Tx, digestId: number): Promise<Cla
   };
 }
 
-function isFree({ state, leaseUntil }: DigestRow, now: Date): boolean {
-  return state === 'waiting' || (state === 'sending' && leaseUntil !== null && leaseUntil <= now);
+function isHeld({ state, leaseUntil }: DigestRow, now: Date): boolean {
+  return state === 'sending' && leaseUntil !== null && leaseUntil > now;
 }
 
 /** Half as long again as a mail may take: time for the mark, and for clocks that differ. */
