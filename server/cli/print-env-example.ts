@@ -1,0 +1,3 @@
+import { writeEnvExample } from '#server/env-example.ts';
+
+process.stdout.write(writeEnvExample());
