@@ -8,6 +8,8 @@ import { healthRoutes } from './features/health/health.routes.ts';
 import { loadsRoutes } from './features/loads/loads.routes.ts';
 import { offersRoutes } from './features/offers/offers.routes.ts';
 import { peopleRoutes } from './features/people/people.routes.ts';
+import { registersRoutes } from './features/registers/registers.routes.ts';
+import { requestsRoutes } from './features/requests/requests.routes.ts';
 import { sessionRoutes } from './features/session/session.routes.ts';
 import { settingsRoutes } from './features/settings/settings.routes.ts';
 import type { Route } from './http/define-route.ts';
@@ -24,6 +26,8 @@ export const allRoutes: readonly Route[] = [
   ...loadsRoutes,
   ...offersRoutes,
   ...peopleRoutes,
+  ...registersRoutes,
+  ...requestsRoutes,
   ...sessionRoutes,
   ...settingsRoutes,
 ];

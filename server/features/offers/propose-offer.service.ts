@@ -1,6 +1,5 @@
 import type { z } from 'zod';
 import type { SignedIn, SiteScope } from '#server/actor.ts';
-import type { Reader } from '#server/db/client.ts';
 import type { Deps } from '#server/deps.ts';
 import { recordAudit } from '#server/features/audit/audit.service.ts';
 import { loadFacility } from '#server/features/availability/facility.service.ts';
@@ -12,22 +11,18 @@ import {
 import { refuseStops, unplaceable } from '#server/features/bookings/booking-order.ts';
 import { listChamberIds } from '#server/features/bookings/chambers.service.ts';
 import { judgeOrder, requireFresh } from '#server/features/bookings/confirm-booking.service.ts';
+import {
+  describeRequest,
+  lockRequest,
+  writeRequest,
+} from '#server/features/requests/requests.service.ts';
+import { submitDraft } from '#server/features/requests/submit-draft.service.ts';
 import { notFound, problem, refused, staleVersion } from '#server/problem.ts';
 import type { proposeOffer as contract } from '#shared/contracts/offers.contract.ts';
 import type { RequestDto } from '#shared/contracts/requests.contract.ts';
 import { may } from '#shared/domain/policies/may.ts';
 import { requireOpenLot } from './offers.service.ts';
 import type { LotNumbers } from './offers.service.ts';
-import { presentRequest } from './request-dto.presenter.ts';
-import {
-  findWholeRequest,
-  listBookingsOfLots,
-  listCellsOfLots,
-  listLots,
-  lockRequestRow,
-  updateRequest,
-} from './requests-of-offers.repository.ts';
-import { submitDraft } from './submit-draft.ts';
 
 type Changing = Pick<Deps, 'clock' | 'db' | 'requestId' | 'transact'>;
 
@@ -57,7 +52,7 @@ export async function proposeOffer(
   const { offer } = judgeOrder({ slotRequest, placement }, loaded, now);
   refuseStops(offer.checks);
   return deps.transact(async (tx) => {
-    const request = await lockRequestRow(tx, site.id, requestId);
+    const request = await lockRequest(tx, site.id, requestId);
     if (request === undefined) {
       throw notFound('such request');
     }
@@ -77,7 +72,7 @@ export async function proposeOffer(
       placement,
     };
     const submitted = request.state === 'draft' ? await submitDraft(tx, request, now) : {};
-    await updateRequest(
+    await writeRequest(
       tx,
       request,
       { ...submitted, proposedOffer: proposal, proposedAt: now },
@@ -93,26 +88,5 @@ export async function proposeOffer(
       after: { ...submitted, proposedOffer: proposal },
     });
     return describeRequest(tx, site, requestId);
-  });
-}
-
-/** A request with its lots, as it stands. Whoever calls has made sure that the caller may see it. */
-export async function describeRequest(
-  reader: Reader,
-  site: SiteScope,
-  requestId: number,
-): Promise<RequestDto> {
-  const whole = await findWholeRequest(reader, requestId);
-  if (whole === undefined) {
-    throw notFound('such request');
-  }
-  const lots = await listLots(reader, requestId);
-  const lotIds = lots.map(({ lot }) => lot.id);
-  return presentRequest({
-    whole,
-    siteCode: site.code,
-    lots,
-    cells: await listCellsOfLots(reader, lotIds),
-    bookings: await listBookingsOfLots(reader, lotIds),
   });
 }

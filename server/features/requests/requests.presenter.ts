@@ -1,7 +1,11 @@
 import { z } from 'zod';
 import { instant, recordNumber } from '#shared/contracts/common.ts';
-import type { LotDto, RequestDto } from '#shared/contracts/requests.contract.ts';
-import type { CellOfLot, LotWithType, WholeRequest } from './requests-of-offers.repository.ts';
+import type {
+  LotDto,
+  RequestDto,
+  RequestRow as RequestListRow,
+} from '#shared/contracts/requests.contract.ts';
+import type { CellOfLot, ListedRequest, LotWithType, WholeRequest } from './requests.repository.ts';
 
 /** What a request keeps of the slot its engineer would like. */
 export const proposedOfferSchema = z.looseObject({
@@ -87,4 +91,25 @@ function proposalOf(request: WholeRequest['request']): RequestDto['proposal'] {
   }
   const { lotId, startAt, endAt, chamberTag } = proposedOfferSchema.parse(request.proposedOffer);
   return { lotId, startAt, endAt, chamberTag, proposedAt: request.proposedAt.toISOString() };
+}
+
+export function presentRequestRow(row: ListedRequest): RequestListRow {
+  const { request } = row;
+  return {
+    id: request.id,
+    state: request.state,
+    requester: { id: request.requesterId, name: row.requesterName },
+    projectName: row.projectName,
+    kind: request.kind,
+    grade: request.grade,
+    cellTypeNames: row.cellTypeNames,
+    cellCount: row.cellCount,
+    setTemperatureC: request.setTempMdegc === null ? null : request.setTempMdegc / 1000,
+    neededByAt: request.neededByAt?.toISOString() ?? null,
+    submittedAt: request.submittedAt?.toISOString() ?? null,
+    updatedAt: request.updatedAt.toISOString(),
+    priority: request.priority,
+    hasProposal: request.proposedOffer !== null,
+    bookingIds: row.bookingIds,
+  };
 }

@@ -1,0 +1,187 @@
+import type { z } from 'zod';
+import type { SignedIn, SiteScope } from '#server/actor.ts';
+import type { Reader } from '#server/db/client.ts';
+import type { Deps } from '#server/deps.ts';
+import { recordAudit } from '#server/features/audit/audit.service.ts';
+import { maySeeRequest } from '#server/features/availability/slot-request.service.ts';
+import { requireVisible } from '#server/features/requests/requests.service.ts';
+import { notFound, problem, refused } from '#server/problem.ts';
+import type {
+  askDeviation as askContract,
+  decideDeviation as decideContract,
+  DeviationDto,
+} from '#shared/contracts/registers.contract.ts';
+import { checkRules } from '#shared/domain/checks/check-rules.ts';
+import { may } from '#shared/domain/policies/may.ts';
+import {
+  insertDeviation,
+  listAsked,
+  listOfRequest,
+  lockDeviation,
+  writeDecision,
+} from './deviations.repository.ts';
+import type { DeviationRecord } from './deviations.repository.ts';
+
+type Reading = Pick<Deps, 'clock' | 'db'>;
+type Changing = Pick<Deps, 'clock' | 'db' | 'requestId' | 'transact'>;
+type Who = { readonly actor: SignedIn; readonly site: SiteScope; readonly id: number };
+
+export async function listDeviations(
+  deps: Reading,
+  { actor, site, id }: Who,
+): Promise<DeviationDto[]> {
+  await requireVisible(deps.db, actor, site, id);
+  const now = deps.clock.now();
+  return (await listOfRequest(deps.db, id)).map((row) => presentDeviation(row, now));
+}
+
+/** Those that wait for a decision, for who may give it. */
+export async function listWaitingDeviations(reader: Reader, site: SiteScope, actor: SignedIn) {
+  const rows = await listAsked(reader, site.id);
+  return rows.filter(({ deviation }) =>
+    may(actor, 'deviation.grant', site.code, { authorId: deviation.requestedById }),
+  );
+}
+
+/** Asks that a rule be lifted for one request; what nobody may lift is refused at once. */
+export async function askDeviation(
+  deps: Changing,
+  { actor, site, id }: Who,
+  wish: z.output<typeof askContract.body>,
+): Promise<DeviationDto> {
+  return deps.transact(async (tx) => {
+    const request = await requireVisible(tx, actor, site, id);
+    if (!may(actor, 'request.edit', site.code, { ownerId: request.requesterId })) {
+      throw refused('Only the person who asked for the slot can ask for a deviation. Ask them.');
+    }
+    if (request.state === 'done' || request.state === 'withdrawn') {
+      throw problem('request.state', {
+        detail: `Request ${id} is ${request.state}: there is nothing left to lift a rule for.`,
+      });
+    }
+    const rule = checkRules[wish.code];
+    if (rule.isNeverLifted) {
+      throw problem('deviation.not-liftable', {
+        detail: `Nobody may lift "${rule.title}": it protects people, cells or the meaning of the result. Change the request or choose another slot.`,
+      });
+    }
+    const now = deps.clock.now();
+    const made = await insertDeviation(tx, {
+      requestId: id,
+      checkCode: wish.code,
+      reason: wish.reason,
+      requestedById: actor.personId,
+      at: now,
+    });
+    await recordAudit(deps, tx, {
+      actor,
+      site,
+      action: 'deviation.ask',
+      subjectKind: 'deviation',
+      subjectId: made,
+      after: { requestId: id, ...wish },
+    });
+    const rows = await listOfRequest(tx, id);
+    return presentDeviation(requireRow(rows.find((row) => row.deviation.id === made)), now);
+  });
+}
+
+/** Somebody other than the asker and the requester grants or refuses. */
+export async function decideDeviation(
+  deps: Changing,
+  { actor, site, id }: Who,
+  wish: z.output<typeof decideContract.body>,
+): Promise<DeviationDto> {
+  return deps.transact(async (tx) => {
+    const row = await lockDeviation(tx, site.id, id);
+    if (row === undefined || !maySeeRequest(actor, site.code, row)) {
+      throw notFound('such deviation');
+    }
+    requireOther(actor, site, row);
+    if (row.deviation.state !== 'asked') {
+      throw problem('request.state', {
+        detail: `Deviation ${id} is decided already by ${row.decidedBy ?? 'somebody'}. Reload the page to see how.`,
+      });
+    }
+    const now = deps.clock.now();
+    requireSense(wish, row, now);
+    const state = wish.grant ? 'granted' : 'refused';
+    await writeDecision(tx, id, {
+      state,
+      decisionReason: wish.reason,
+      customerAcceptance: wish.customerAcceptance,
+      decidedById: actor.personId,
+      decidedAt: now,
+      expiresAt: wish.expiresAt === null ? null : new Date(wish.expiresAt),
+    });
+    await recordAudit(deps, tx, {
+      actor,
+      site,
+      action: `deviation.${wish.grant ? 'grant' : 'refuse'}`,
+      subjectKind: 'deviation',
+      subjectId: id,
+      before: { state: 'asked' },
+      after: { state, ...wish },
+    });
+    const rows = await listOfRequest(tx, row.deviation.requestId ?? 0);
+    return presentDeviation(requireRow(rows.find((each) => each.deviation.id === id)), now);
+  });
+}
+
+function requireOther(actor: SignedIn, site: SiteScope, row: DeviationRecord): void {
+  const isOther =
+    row.requesterId !== actor.personId &&
+    may(actor, 'deviation.grant', site.code, { authorId: row.deviation.requestedById });
+  if (!isOther) {
+    throw problem('deviation.same-person', {
+      detail: 'You asked for this yourself. Another metrologist or a manager must decide.',
+    });
+  }
+}
+
+/** Reported work is lifted only with the customer's word, and never without an end in the future. */
+function requireSense(
+  wish: z.output<typeof decideContract.body>,
+  row: DeviationRecord,
+  now: Date,
+): void {
+  const acceptance = wish.customerAcceptance?.trim() ?? '';
+  if (wish.grant && row.grade === 'reported' && acceptance === '') {
+    const detail = 'For reported work note how the customer agreed.';
+    throw problem('input.invalid', {
+      detail,
+      errors: [{ detail, pointer: '#/customerAcceptance' }],
+    });
+  }
+  if (wish.expiresAt !== null && Date.parse(wish.expiresAt) <= now.getTime()) {
+    const detail = 'This time is over. Give an end in the future, or none.';
+    throw problem('input.invalid', { detail, errors: [{ detail, pointer: '#/expiresAt' }] });
+  }
+}
+
+function requireRow(row: DeviationRecord | undefined): DeviationRecord {
+  if (row === undefined) {
+    throw new Error('A deviation written just now is gone.');
+  }
+  return row;
+}
+
+function presentDeviation(
+  { deviation, askedBy, decidedBy }: DeviationRecord,
+  now: Date,
+): DeviationDto {
+  const isOver = deviation.expiresAt !== null && deviation.expiresAt <= now;
+  return {
+    id: deviation.id,
+    requestId: deviation.requestId ?? 0,
+    code: deviation.checkCode,
+    state: deviation.state === 'granted' && isOver ? 'expired' : deviation.state,
+    reason: deviation.reason,
+    customerAcceptance: deviation.customerAcceptance,
+    askedBy,
+    askedAt: deviation.requestedAt.toISOString(),
+    decidedBy,
+    decidedAt: deviation.decidedAt?.toISOString() ?? null,
+    expiresAt: deviation.expiresAt?.toISOString() ?? null,
+  };
+}
