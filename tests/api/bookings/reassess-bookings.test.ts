@@ -59,7 +59,7 @@ test('a breakdown puts future bookings at risk with the reason; its end clears t
   const atRisk = await look(booking);
   expect(atRisk).toMatchObject({ isAtRisk: true, version: booking.version + 1 });
   expect(atRisk.atRiskReason).toMatch(
-    /^S\d\d\/1 is unavailable: fan fails, until Fri 6 Mar 12:00\.$/,
+    /^S\d\d\/1 is unavailable: fan fails; until Fri 6 Mar 12:00\.$/,
   );
   expect(atRisk.history[0]).toMatchObject({ what: 'Put at risk', actor: 'Millpond' });
   expect(atRisk.checks).toEqual(booking.checks);
