@@ -35,13 +35,13 @@ export function createBullmqJobQueue(
   queue.on('error', onError);
   return {
     async add(jobs) {
-      await queue.addBulk(
-        jobs.map((job) => ({
-          name: job.name,
-          data: envelopeOf(job),
-          opts: { ...optionsOf(job), ...(job.jobId === null ? {} : { jobId: job.jobId }) },
-        })),
-      );
+      // One by one: adding in bulk makes a temporary table, to which the runtime role has no right.
+      for (const job of jobs) {
+        await queue.add(job.name, envelopeOf(job), {
+          ...optionsOf(job),
+          ...(job.jobId === null ? {} : { jobId: job.jobId }),
+        });
+      }
     },
     async plan(schedules) {
       for (const schedule of schedules) {

@@ -37,6 +37,10 @@ export async function createTestDatabase(): Promise<TestDatabase> {
         `create database ${name} template ${template} strategy file_copy owner millpond_owner`,
       ),
     );
+    // As the launcher leaves it: what works only with more rights must fail here too.
+    await admin.query(
+      `revoke all on database ${name} from public; grant connect on database ${name} to millpond_app`,
+    );
   });
   return {
     url: addressOf(adminUrl, name, 'millpond_app'),
