@@ -10,6 +10,7 @@ import { offersRoutes } from './features/offers/offers.routes.ts';
 import { peopleRoutes } from './features/people/people.routes.ts';
 import { registersRoutes } from './features/registers/registers.routes.ts';
 import { requestsRoutes } from './features/requests/requests.routes.ts';
+import { searchRoutes } from './features/search/search.routes.ts';
 import { sessionRoutes } from './features/session/session.routes.ts';
 import { settingsRoutes } from './features/settings/settings.routes.ts';
 import type { Route } from './http/define-route.ts';
@@ -28,6 +29,7 @@ export const allRoutes: readonly Route[] = [
   ...peopleRoutes,
   ...registersRoutes,
   ...requestsRoutes,
+  ...searchRoutes,
   ...sessionRoutes,
   ...settingsRoutes,
 ];
