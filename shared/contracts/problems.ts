@@ -31,7 +31,7 @@ export const problems = {
   'load.state': { status: 409, title: 'The load is not in a state that allows this' },
   'calibration.state': { status: 409, title: 'The calibration is not in a state that allows this' },
   'calibration.same-person': { status: 409, title: 'A second person must approve' },
-  'calibration.scope': { status: 409, title: 'The calibration does not fit the instrument' },
+  'calibration.scope': { status: 422, title: 'The calibration does not fit the instrument' },
   'deviation.same-person': { status: 409, title: 'Another person must decide' },
   'deviation.not-liftable': { status: 409, title: 'This rule cannot be lifted' },
   'instrument.state': { status: 409, title: 'The instrument is not in a state that allows this' },

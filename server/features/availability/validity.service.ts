@@ -52,8 +52,11 @@ export type SiteValidity = {
   readonly scopesOf: (instrumentId: number) => readonly ScopeFacts[];
   /** The instrument and everything it is mounted in. */
   readonly chainOf: (instrumentId: number) => readonly number[];
-  /** The worst of its scopes; null where nothing on it has to be calibrated. */
-  readonly badgeOf: (instrumentId: number) => BadgeState | null;
+  /** The worst of its scopes, or of a part of them; null where nothing has to be calibrated. */
+  readonly badgeOf: (
+    instrumentId: number,
+    isMeant?: (scope: ScopeFacts) => boolean,
+  ) => BadgeState | null;
 };
 
 /** What every instrument of a site is calibrated for now; for the register, the board and the due list. */
@@ -91,7 +94,8 @@ export async function loadSiteValidity(
     stateOf: (instrumentId) => stateOf(instruments, instrumentId),
     scopesOf,
     chainOf: (instrumentId) => chainOf(instruments, instrumentId),
-    badgeOf: (instrumentId) => worstOf(scopesOf(instrumentId)),
+    badgeOf: (instrumentId, isMeant = () => true) =>
+      worstOf(scopesOf(instrumentId).filter((scope) => isMeant(scope))),
   };
 }
 
@@ -222,8 +226,20 @@ function describeScopes(
       site: of.calendar,
       dueSoonDays: of.dueSoonDays,
     });
-    return { ...part, spans, badge };
+    return { ...part, spans, badge: dateLapse(badge, spans, of) };
   });
+}
+
+/** What a failed calibration ended has no due day of its own: it was last in date the day before. */
+function dateLapse(
+  badge: BadgeState,
+  spans: readonly ValiditySpan[],
+  at: { readonly nowMs: number; readonly calendar: CalendarIndex },
+): BadgeState {
+  const last = spans.findLast((span) => span.endMs <= at.nowMs);
+  return badge.word === 'overdue' && badge.dueOn === null && last !== undefined
+    ? { ...badge, dueOn: siteDay(at.calendar, last.endMs - 1) }
+    : badge;
 }
 
 /** What an instrument without channels is calibrated for before it has any record. */

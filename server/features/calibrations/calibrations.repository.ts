@@ -45,20 +45,20 @@ export async function listDutyRows(reader: Reader, siteId: number) {
 }
 export type DutyRecord = Awaited<ReturnType<typeof listDutyRows>>[number];
 
-/** The newest record of each state that matters to the due list. */
+/** The latest record of each instrument and state that matters to the due list. */
 export async function listNewestRecords(reader: Reader, siteId: number) {
   return reader
-    .select({
+    .selectDistinctOn([c.instrumentId, c.state], {
       instrumentId: c.instrumentId,
       state: c.state,
-      id: sql<number>`max(${c.id})::int`,
+      id: c.id,
     })
     .from(c)
     .innerJoin(instrumentsTable, eq(instrumentsTable.id, c.instrumentId))
     .where(
       and(eq(instrumentsTable.siteId, siteId), inArray(c.state, ['approved', 'awaiting-approval'])),
     )
-    .groupBy(c.instrumentId, c.state);
+    .orderBy(asc(c.instrumentId), asc(c.state), desc(c.performedOn), desc(c.id));
 }
 
 /** Bookings to come over each instrument, with the end of what they hold of it. */
@@ -211,30 +211,34 @@ export async function updateRecord(
   return rows.length === 1;
 }
 
-export async function markReplaced(tx: Tx, id: number, at: Date): Promise<void> {
-  await tx
+/** False where it is not approved any more: another record has replaced it already. */
+export async function markReplaced(tx: Tx, id: number, at: Date): Promise<boolean> {
+  const rows = await tx
     .update(c)
     .set({ state: 'replaced', updatedAt: at, version: sql`${c.version} + 1` })
-    .where(eq(c.id, id));
+    .where(and(eq(c.id, id), eq(c.state, 'approved')))
+    .returning({ id: c.id });
+  return rows.length === 1;
 }
 
-/** The due day of the duty that stands for the whole instrument. */
+const d = dutiesTable;
+
+export async function listDutiesOf(reader: Reader, instrumentId: number) {
+  return reader
+    .select()
+    .from(d)
+    .where(and(eq(d.instrumentId, instrumentId), eq(d.kind, 'calibration'), isNull(d.endedAt)))
+    .orderBy(asc(d.id));
+}
+
 export async function updateDutyDueDay(
   tx: Tx,
-  instrumentId: number,
+  dutyId: number,
   nextDueOn: string,
   at: Date,
 ): Promise<void> {
-  const d = dutiesTable;
   await tx
     .update(d)
     .set({ nextDueOn, updatedAt: at, version: sql`${d.version} + 1` })
-    .where(
-      and(
-        eq(d.instrumentId, instrumentId),
-        eq(d.kind, 'calibration'),
-        isNull(d.channelId),
-        isNull(d.endedAt),
-      ),
-    );
+    .where(eq(d.id, dutyId));
 }

@@ -10,8 +10,14 @@ import { problem, staleVersion } from '#server/problem.ts';
 import type { decisionSchema } from '#shared/contracts/calibrations.contract.ts';
 import { may } from '#shared/domain/policies/may.ts';
 import { describeRecord, requireRecord } from './calibrations.service.ts';
-import { markReplaced, updateDutyDueDay, updateRecord } from './calibrations.repository.ts';
+import {
+  listDutiesOf,
+  markReplaced,
+  updateDutyDueDay,
+  updateRecord,
+} from './calibrations.repository.ts';
 import type { RecordRow } from './calibrations.repository.ts';
+import { isOfDuty } from './duties.service.ts';
 import type { Changing } from './record-calibration.service.ts';
 
 type Decision = z.input<typeof decisionSchema>;
@@ -29,10 +35,8 @@ export async function approveCalibration(
     // Before the decision is read again: no booking may slip in between, and of two deciders one waits.
     const places = await lockInstruments(tx, [record.instrumentId]);
     await decide(deps, tx, who, wish.version, { state: 'approved' });
-    if (record.replacesId !== null) {
-      await markReplaced(tx, record.replacesId, deps.clock.now());
-    }
-    await moveDuty(deps, tx, site, record.instrumentId);
+    await replace(deps, tx, site, record);
+    await moveDuties(deps, tx, site, record.instrumentId);
     const touched = await reassessBookings(deps, tx, site, places, actor);
     return {
       calibration: await describeRecord({ db: tx }, await requireRecord({ db: tx }, site, id)),
@@ -103,8 +107,24 @@ async function requireUndecided(tx: Tx, row: RecordRow): Promise<void> {
   }
 }
 
-/** The duty follows the records: its next day is the earliest on which something of it runs out. */
-async function moveDuty(
+async function replace(
+  deps: Changing,
+  tx: Tx,
+  site: SiteScope,
+  { id, replacesId }: RecordRow['record'],
+): Promise<void> {
+  if (replacesId === null || (await markReplaced(tx, replacesId, deps.clock.now()))) {
+    return;
+  }
+  const current = await describeRecord({ db: tx }, await requireRecord({ db: tx }, site, id));
+  throw problem('calibration.state', {
+    detail: `Calibration ${replacesId}, which this one corrects, has been replaced meanwhile. Refuse this record and correct the newer one.`,
+    current,
+  });
+}
+
+/** A duty follows the records: its next day is the earliest on which something of it runs out. */
+async function moveDuties(
   deps: Changing,
   tx: Tx,
   site: SiteScope,
@@ -112,8 +132,10 @@ async function moveDuty(
 ): Promise<void> {
   const now = deps.clock.now();
   const validity = await loadSiteValidity(tx, site, now.getTime(), [instrumentId]);
-  const dueOn = validity.badgeOf(instrumentId)?.dueOn ?? null;
-  if (dueOn !== null) {
-    await updateDutyDueDay(tx, instrumentId, dueOn, now);
+  for (const duty of await listDutiesOf(tx, instrumentId)) {
+    const dueOn = validity.badgeOf(instrumentId, isOfDuty(duty))?.dueOn ?? null;
+    if (dueOn !== null && dueOn !== duty.nextDueOn) {
+      await updateDutyDueDay(tx, duty.id, dueOn, now);
+    }
   }
 }

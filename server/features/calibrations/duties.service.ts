@@ -3,6 +3,7 @@ import type { SignedIn, SiteScope } from '#server/actor.ts';
 import type { Deps } from '#server/deps.ts';
 import { groupBy } from '#server/features/availability/group-by.ts';
 import { loadSiteValidity } from '#server/features/availability/validity.service.ts';
+import type { ScopeFacts } from '#server/features/availability/validity.service.ts';
 import { decodeCursor, encodeCursor, rowsToRead, toPage } from '#server/paging.ts';
 import type { Page } from '#server/paging.ts';
 import type { DutyRow, listDuties as contract } from '#shared/contracts/calibrations.contract.ts';
@@ -15,6 +16,7 @@ import {
   listDutyRows,
   listNewestRecords,
 } from './calibrations.repository.ts';
+import type { DutyRecord } from './calibrations.repository.ts';
 
 type Query = z.output<typeof contract.query>;
 const sort = 'due';
@@ -60,7 +62,7 @@ export async function describeDuties(
   );
   return (await listDutyRows(deps.db, site.id)).map((row) => {
     const { instrumentId } = row.duty;
-    const badge = validity.badgeOf(instrumentId);
+    const badge = validity.badgeOf(instrumentId, isOfDuty(row.duty));
     const dueOn = badge?.dueOn ?? row.duty.nextDueOn;
     const ahead = bookings.get(instrumentId) ?? [];
     const idOf = (state: string) =>
@@ -74,6 +76,20 @@ export async function describeDuties(
       atRisk: ahead.filter(({ isAtRisk }) => isAtRisk).length,
     });
   });
+}
+
+type DutyScope = Pick<DutyRecord['duty'], 'channelId' | 'function' | 'meterRangeId'>;
+
+/** What a duty leaves open stands for all of it. */
+export function isOfDuty(duty: DutyScope): (scope: ScopeFacts) => boolean {
+  return (scope) =>
+    isEither(duty.channelId, scope.channelId) &&
+    isEither(duty.function, scope.function) &&
+    isEither(duty.meterRangeId, scope.meterRangeId);
+}
+
+function isEither<Value>(wanted: Value | null, value: Value | null): boolean {
+  return wanted === null || wanted === value;
 }
 
 function countPast(

@@ -136,8 +136,10 @@ async function requireFile(
     await getFile({ db: tx }, actor, site, fileId);
   } catch (error) {
     if (error instanceof ProblemError && error.code === 'not-found') {
+      const detail = 'The certificate file has not arrived. Send the file again, then the record.';
       throw problem('file.incomplete', {
-        detail: 'The certificate file has not arrived. Send the file again, then the record.',
+        detail,
+        errors: [{ detail, pointer: '#/fileId' }],
       });
     }
     throw error;

@@ -1,3 +1,4 @@
+import { toStabilityFact } from '#server/features/availability/to-equipment.ts';
 import type { ScopeFacts, SiteValidity } from '#server/features/availability/validity.service.ts';
 import type { BookingRow } from '#shared/contracts/bookings.contract.ts';
 import type {
@@ -43,8 +44,8 @@ export type InstrumentDetails = {
   readonly specs: Specs;
   readonly calibrations: readonly CalibrationRecord[];
   readonly assessments: readonly AssessmentRecord[];
-  /** Logs judged before this day no longer count. */
-  readonly oldestCountingDay: string;
+  /** Logs that ended before this instant no longer count. */
+  readonly oldestCountingMs: number;
   readonly unavailability: readonly UnavailabilityRecord[];
   readonly nextBookings: readonly BookingRow[];
 };
@@ -77,7 +78,9 @@ export function presentInstrument(details: InstrumentDetails): InstrumentDto {
       periodS: assessment.periodS,
       resolutionK: assessment.resolutionK,
       sensorPlace: assessment.sensorPlace,
-      isTooOld: assessment.assessedOn < details.oldestCountingDay,
+      isTooOld:
+        toStabilityFact(assessment, details.validity.calendar).assessedAtMs <
+        details.oldestCountingMs,
       assessedBy,
     })),
     unavailability: details.unavailability.map(({ row, reportedBy }) => ({

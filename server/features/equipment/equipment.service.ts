@@ -12,7 +12,6 @@ import type {
   InstrumentRow,
   listInstruments as listContract,
 } from '#shared/contracts/equipment.contract.ts';
-import { siteDay } from '#shared/domain/calendar/site-day.ts';
 import { presentInstrument, presentInstrumentRow } from './equipment.presenter.ts';
 import {
   findByTag,
@@ -128,10 +127,7 @@ export async function describeInstrument(
     specs: await getSpecs(deps.db, id),
     calibrations: await listCalibrationRows(deps.db, id),
     assessments: await listAssessmentRows(deps.db, id),
-    oldestCountingDay: siteDay(
-      validity.calendar,
-      now.getTime() - policy.stabilityMaxAgeDays * dayMs,
-    ),
+    oldestCountingMs: now.getTime() - policy.stabilityMaxAgeDays * dayMs,
     unavailability: await listOpenUnavailability(deps.db, validity.chainOf(id), now),
     nextBookings: bookings.items,
   });
