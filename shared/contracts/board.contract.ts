@@ -54,6 +54,7 @@ export const tideSchema = z.object({
   rowKey: z.string(),
   positions: z.int(),
   taken: z.array(z.object({ at: instant, count: z.int() })),
+  /** Corners of the line: level between equal values, slanting while the chamber ramps or returns. */
   temperature: z.array(z.object({ at: instant, setTemperatureC: z.number() })),
 });
 export type Tide = z.infer<typeof tideSchema>;

@@ -1,5 +1,5 @@
 import { groupBy } from '#server/features/availability/group-by.ts';
-import type { SiteValidity } from '#server/features/availability/validity.service.ts';
+import type { ScopeFacts, SiteValidity } from '#server/features/availability/validity.service.ts';
 import type { BoardBlock } from '#shared/contracts/board.contract.ts';
 import { formatSiteTime } from '#shared/domain/calendar/format-site-time.ts';
 import { formatSiteDay } from '#shared/domain/calendar/format-site-day.ts';
@@ -16,6 +16,7 @@ type Input = {
   readonly taken: readonly TakenRow[];
   readonly unavailable: readonly RowUnavailability[];
   readonly nowMs: number;
+  readonly seesProject: (projectId: number) => boolean;
 };
 
 /** The stretches of rows that nothing can be booked in, each with its sentence. */
@@ -49,7 +50,8 @@ function block(
 }
 
 /** A whole instrument is closed by an outage only where it takes every unit of it. */
-function outageBlocks({ taken, window, validity }: Input, row: DrawnRow): BoardBlock[] {
+function outageBlocks(input: Input, row: DrawnRow): BoardBlock[] {
+  const { taken, window, validity } = input;
   const planned = taken.filter(
     (each) => each.bookingId === null && row.unitIds.includes(each.unitId),
   );
@@ -59,14 +61,19 @@ function outageBlocks({ taken, window, validity }: Input, row: DrawnRow): BoardB
     if (first === undefined || (row.isWhole && group.length < row.unitIds.length)) {
       return [];
     }
-    const title = first.outageTitle ?? first.otherWorkTitle ?? 'planned';
     const until = formatSiteTime(validity.calendar, first.during.endMs);
     return block(row, window, {
       ...first.during,
       kind: 'outage',
-      sentence: `${title}, until ${until}`,
+      sentence: `${first.outageTitle ?? otherWorkTitle(input, first)}, until ${until}`,
     });
   });
+}
+
+/** What it is for is its project's own; everybody sees that the place is taken. */
+function otherWorkTitle({ seesProject }: Input, row: TakenRow): string {
+  const isSeen = row.otherWorkProjectId === null || seesProject(row.otherWorkProjectId);
+  return isSeen && row.otherWorkTitle !== null ? row.otherWorkTitle : 'Taken by other work';
 }
 
 function unavailableBlocks({ unavailable, window, validity }: Input, row: DrawnRow): BoardBlock[] {
@@ -77,10 +84,11 @@ function unavailableBlocks({ unavailable, window, validity }: Input, row: DrawnR
         startMs: span.startMs,
         endMs: span.endMs ?? window.endMs,
         kind: 'unavailable',
-        sentence:
+        sentence: `${span.note.trim().replace(/[.;]+$/, '')}; ${
           span.endMs === null
-            ? `${span.note} Nobody knows until when.`
-            : `${span.note} Until ${formatSiteTime(validity.calendar, span.endMs)}.`,
+            ? 'nobody knows until when.'
+            : `until ${formatSiteTime(validity.calendar, span.endMs)}.`
+        }`,
       }),
     );
 }
@@ -91,9 +99,14 @@ const stateWords: Partial<Record<ServiceState, string>> = {
   retired: 'is retired',
 };
 
-function stateBlocks({ validity, window, nowMs }: Input, row: DrawnRow): BoardBlock[] {
+/** Out of service as a whole; left out where a report with no end says why already. */
+function stateBlocks(input: Input, row: DrawnRow): BoardBlock[] {
+  const { validity, window, nowMs, unavailable } = input;
   const word = stateWords[validity.stateOf(row.instrumentId)];
-  return word === undefined
+  const isReported = unavailable.some(
+    ({ rowKey, span }) => rowKey === row.key && span.startMs <= nowMs && span.endMs === null,
+  );
+  return word === undefined || isReported
     ? []
     : block(row, window, {
         startMs: nowMs,
@@ -103,20 +116,23 @@ function stateBlocks({ validity, window, nowMs }: Input, row: DrawnRow): BoardBl
       });
 }
 
-/** After the due day nothing can be booked; said once, from the upright on. */
+/** Whether what is calibrated there is what a row draws: its own channels, or the whole instrument. */
+export function concernsRow(row: DrawnRow, scope: Pick<ScopeFacts, 'unitId'>): boolean {
+  return scope.unitId === null || row.unitIds.includes(scope.unitId);
+}
+
+/** Where not one range of the row is valid any more nothing can be booked; said once. */
 function dueBlocks({ validity, window, nowMs }: Input, row: DrawnRow): BoardBlock[] {
   if (validity.stateOf(row.instrumentId) !== 'in-service') {
     return [];
   }
-  const scopes = validity
-    .scopesOf(row.instrumentId)
-    .filter((scope) => row.isWhole || scope.unitId === null || row.unitIds.includes(scope.unitId));
+  const scopes = validity.scopesOf(row.instrumentId).filter((scope) => concernsRow(row, scope));
   const tag = validity.instruments.get(row.instrumentId)?.tag ?? '';
   const ends = scopes.map(({ badge }) => badge.validUntilMs ?? nowMs);
   if (ends.length === 0) {
     return [];
   }
-  const startMs = Math.min(...ends);
+  const startMs = Math.max(...ends);
   const dueOn = scopes.find(({ badge }) => (badge.validUntilMs ?? nowMs) === startMs)?.badge.dueOn;
   const sentence =
     dueOn === undefined || dueOn === null

@@ -1,11 +1,11 @@
 import { groupBy } from '#server/features/availability/group-by.ts';
-import type { SiteValidity } from '#server/features/availability/validity.service.ts';
 import type { BoardGroup, BoardRow } from '#shared/contracts/board.contract.ts';
 import { boardGroups } from '#shared/contracts/board.contract.ts';
 import type { UnitRow } from './board.repository.ts';
 import type { DrawnRow } from './drawing.service.ts';
 
-export type ListedRow = { readonly row: BoardRow; readonly drawn: DrawnRow };
+/** A row in its place. Its badge is judged only once it is known to be shown. */
+export type ListedRow = { readonly row: Omit<BoardRow, 'badge'>; readonly drawn: DrawnRow };
 
 const groupOf: Readonly<Record<UnitRow['kind'], BoardGroup>> = {
   'chamber-position': 'chambers',
@@ -23,7 +23,6 @@ export function listRows(
     readonly groups: readonly BoardGroup[];
     readonly open: ReadonlySet<string>;
     readonly text: string;
-    readonly validity: SiteValidity;
   },
 ): ListedRow[] {
   const text = wish.text.trim().toUpperCase();
@@ -34,7 +33,7 @@ export function listRows(
       return [...groupBy(members, (unit) => unit.instrumentId).values()].flatMap((ofOne) => {
         const [first] = ofOne;
         const isWanted = first?.tag.includes(text) === true;
-        return first === undefined || !isWanted ? [] : rowsOf(group, first, ofOne, wish);
+        return first === undefined || !isWanted ? [] : rowsOf(group, first, ofOne, wish.open);
       });
     });
 }
@@ -43,18 +42,18 @@ function rowsOf(
   group: BoardGroup,
   first: UnitRow,
   units: readonly UnitRow[],
-  wish: { readonly open: ReadonlySet<string>; readonly validity: SiteValidity },
+  open: ReadonlySet<string>,
 ): ListedRow[] {
   const key = `${first.instrumentKind}s` === group ? first.tag : `${first.tag}:${group}`;
   const href = `/equipment/${first.tag}`;
+  const noun = group === 'chambers' ? 'position' : 'channel';
   const parent: ListedRow = {
     row: {
       key,
       group,
       parentKey: null,
       label: first.tag,
-      note: first.model,
-      badge: wish.validity.badgeOf(first.instrumentId)?.word ?? null,
+      note: `${units.length} ${units.length === 1 ? noun : `${noun}s`}`,
       childCount: units.length,
       href,
     },
@@ -66,7 +65,7 @@ function rowsOf(
       hasBars: false,
     },
   };
-  if (!wish.open.has(key)) {
+  if (!open.has(key)) {
     return [parent];
   }
   const children = units.map((unit): ListedRow => ({
@@ -76,7 +75,6 @@ function rowsOf(
       parentKey: key,
       label: unit.label,
       note: (unit.formats ?? []).join(', '),
-      badge: null,
       childCount: 0,
       href,
     },

@@ -7,7 +7,7 @@ import { cellTypesTable } from '#server/db/tables/cell.table.ts';
 import { chamberPositionsTable, chamberSpecsTable } from '#server/db/tables/chamber.table.ts';
 import { channelsTable } from '#server/db/tables/channel.table.ts';
 import { instrumentsTable } from '#server/db/tables/instrument.table.ts';
-import { chamberLoadsTable, loadPhasesTable } from '#server/db/tables/load.table.ts';
+import { loadPhasesTable } from '#server/db/tables/load.table.ts';
 import { otherWorkTable } from '#server/db/tables/other-work.table.ts';
 import { outagesTable } from '#server/db/tables/outage.table.ts';
 import { requestLotsTable, requestsTable } from '#server/db/tables/request.table.ts';
@@ -54,6 +54,7 @@ export async function listTaken(reader: Reader, unitIds: readonly number[], wind
       outageTitle: outagesTable.title,
       otherWorkId: t.otherWorkId,
       otherWorkTitle: otherWorkTable.title,
+      otherWorkProjectId: otherWorkTable.projectId,
     })
     .from(t)
     .leftJoin(outagesTable, eq(outagesTable.id, t.outageId))
@@ -131,12 +132,11 @@ export async function listTemperaturePhases(
   return reader
     .select({
       chamberId: t.chamberId,
+      phase: t.phase,
       during: t.during,
       setTempMdegc: t.setTempMdegc,
-      loadState: chamberLoadsTable.state,
     })
     .from(t)
-    .innerJoin(chamberLoadsTable, eq(chamberLoadsTable.id, t.loadId))
     .where(
       and(
         eq(t.live, true),

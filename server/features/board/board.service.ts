@@ -3,19 +3,26 @@ import type { SignedIn, SiteScope } from '#server/actor.ts';
 import type { Deps } from '#server/deps.ts';
 import { groupBy } from '#server/features/availability/group-by.ts';
 import { loadSiteValidity } from '#server/features/availability/validity.service.ts';
+import type { SiteValidity } from '#server/features/availability/validity.service.ts';
 import { problem } from '#server/problem.ts';
 import { boardGroups } from '#shared/contracts/board.contract.ts';
-import type { BoardWindow, getBoard as contract, Tide } from '#shared/contracts/board.contract.ts';
+import type {
+  BoardRow,
+  BoardWindow,
+  getBoard as contract,
+  Tide,
+} from '#shared/contracts/board.contract.ts';
 import { findCalendarDay } from '#shared/domain/calendar/find-calendar-day.ts';
 import { getCalendarDay } from '#shared/domain/calendar/get-calendar-day.ts';
 import type { CalendarIndex } from '#shared/domain/calendar/types.ts';
 import type { Span } from '#shared/domain/intervals/types.ts';
+import { concernsRow } from './blocks.presenter.ts';
 import { listRows } from './board-rows.presenter.ts';
 import type { ListedRow } from './board-rows.presenter.ts';
 import { listTemperaturePhases, listUnits } from './board.repository.ts';
 import type { TakenRow, UnitRow } from './board.repository.ts';
 import { drawRows } from './drawing.service.ts';
-import { takenSteps, temperatureSteps } from './tides.presenter.ts';
+import { isInUse, takenSteps, temperatureLine } from './tides.presenter.ts';
 
 type Reading = Pick<Deps, 'clock' | 'db'>;
 
@@ -42,16 +49,17 @@ export async function getBoard(
   query: z.output<typeof contract.query>,
 ): Promise<BoardWindow> {
   const window = requireWindow(query);
-  const validity = await loadSiteValidity(deps.db, site, deps.clock.now().getTime());
   const units = await listUnits(deps.db, site.id);
   const all = listRows(units, {
     groups: query.groups ?? boardGroups,
     open: new Set((query.open ?? '').split(',')),
     text: query.text ?? '',
-    validity,
   });
   const offset = query.offset ?? 0;
   const shown = all.slice(offset, offset + (query.limit ?? rowsAtOnce));
+  const instrumentIds = [...new Set(shown.map(({ drawn }) => drawn.instrumentId))];
+  const nowMs = deps.clock.now().getTime();
+  const validity = await loadSiteValidity(deps.db, site, nowMs, instrumentIds);
   const drawing = await drawRows(deps, actor, site, {
     rows: shown.map(({ drawn }) => drawn),
     window,
@@ -60,13 +68,20 @@ export async function getBoard(
   return {
     from: new Date(window.startMs).toISOString(),
     to: new Date(window.endMs).toISOString(),
-    rows: shown.map(({ row }) => row),
+    rows: shown.map((listed) => ({ ...listed.row, badge: badgeOf(listed, validity) })),
     rowCount: all.length,
     bars: drawing.bars,
     blocks: drawing.blocks,
     tides: await drawTides(deps, { shown, units, taken: drawing.taken, window }),
     staffed: staffedSpans(validity.calendar, window),
   };
+}
+
+/** A position is not calibrated by itself; a channel is, apart from its neighbours. */
+function badgeOf({ row, drawn }: ListedRow, validity: SiteValidity): BoardRow['badge'] {
+  return row.group === 'chambers' && !drawn.isWhole
+    ? null
+    : (validity.badgeOf(drawn.instrumentId, (scope) => concernsRow(drawn, scope))?.word ?? null);
 }
 
 async function drawTides(
@@ -97,11 +112,11 @@ async function drawTides(
       rowKey: row.key,
       positions: drawn.unitIds.length,
       taken: takenSteps(
-        drawn.unitIds.flatMap((unitId) => takenOf.get(unitId) ?? []),
+        drawn.unitIds.flatMap((unitId) => takenOf.get(unitId) ?? []).filter(isInUse),
         window,
       ),
       temperature:
-        idle === null ? [] : temperatureSteps(phases.get(drawn.instrumentId) ?? [], idle, window),
+        idle === null ? [] : temperatureLine(phases.get(drawn.instrumentId) ?? [], idle, window),
     };
   });
 }

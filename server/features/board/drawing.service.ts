@@ -5,6 +5,7 @@ import { maySeeRequest } from '#server/features/availability/slot-request.servic
 import type { SiteValidity } from '#server/features/availability/validity.service.ts';
 import type { BoardBar, BoardBlock } from '#shared/contracts/board.contract.ts';
 import type { Span } from '#shared/domain/intervals/types.ts';
+import { seesProject } from '#shared/domain/policies/sees-project.ts';
 import { drawBlocks } from './blocks.presenter.ts';
 import { readUnavailability } from './unavailability.service.ts';
 import { listDrawnBookings, listPhases, listTaken } from './board.repository.ts';
@@ -44,6 +45,7 @@ export async function drawRows(
   return {
     bars: await drawBars(deps, actor, site, { rows, taken }),
     blocks: drawBlocks({
+      seesProject: (projectId) => seesProject(actor, site.code, projectId),
       rows,
       window,
       validity,

@@ -15,7 +15,7 @@ import { formatTemperature } from '#shared/domain/checks/words/format-temperatur
 import type { Span } from '#shared/domain/intervals/types.ts';
 import { staffedSpans } from './board.service.ts';
 import { listTaken, listUnits } from './board.repository.ts';
-import { takenSteps } from './tides.presenter.ts';
+import { isInUse, takenSteps } from './tides.presenter.ts';
 import {
   listBookedSpans,
   listBookingsOfLoads,
@@ -53,10 +53,7 @@ export async function getToday(
     day,
     staffed: staffedSpans(calendar, span),
     positions: positions.length,
-    tide: takenSteps(
-      taken.filter(({ bookingId }) => bookingId !== null),
-      span,
-    ),
+    tide: takenSteps(taken.filter(isInUse), span),
     doors: doors
       .filter(({ phase }) => phase !== 'measure')
       .map((row) => ({

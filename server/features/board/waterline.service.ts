@@ -12,6 +12,7 @@ import { siteDay } from '#shared/domain/calendar/site-day.ts';
 import { formatTemperature } from '#shared/domain/checks/words/format-temperature.ts';
 import { listNewestLogs, listTaken, listTemperaturePhases, listUnits } from './board.repository.ts';
 import type { TakenRow, UnitRow } from './board.repository.ts';
+import { isInUse } from './tides.presenter.ts';
 
 type Vessel = Waterline['vessels'][number];
 const dayMs = 86_400_000;
@@ -93,17 +94,17 @@ function describe(chamber: {
   readonly outReason: string | null;
 }): Vessel {
   const { first, positions } = chamber;
-  const booked = chamber.taken.filter(({ bookingId }) => bookingId !== null).length;
+  const inUse = chamber.taken.filter(isInUse).length;
   const closed = chamber.taken.find(({ outageId }) => outageId !== null);
-  const isClosed = closed !== undefined && booked === 0;
+  const isClosed = closed !== undefined && inUse === 0;
   const outReason = chamber.outReason ?? (isClosed ? (closed.outageTitle ?? 'outage') : null);
   const setTemperatureC = chamber.mdegc / 1000;
-  const share = `${first.tag}: ${booked} of ${positions} positions taken`;
+  const share = `${first.tag}: ${inUse} of ${positions} positions taken`;
   const plan = `${formatTemperature(setTemperatureC)}, as planned`;
   const base = {
     tag: first.tag,
     setTemperatureC,
-    taken: chamber.taken.length - (isClosed ? chamber.taken.length : 0),
+    taken: inUse,
     positions,
   };
   if (outReason !== null) {

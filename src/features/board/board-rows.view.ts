@@ -1,4 +1,4 @@
-import type { BoardBar, BoardRow, BoardWindow } from '#shared/contracts/board.contract.ts';
+import type { BoardBar, BoardRow, BoardWindow, Tide } from '#shared/contracts/board.contract.ts';
 import type { TideStep } from '#src/components/drawing/tide-line.view.ts';
 
 /** A line of the drawn board: a heading, an instrument folded or open, or one channel or position. */
@@ -75,14 +75,25 @@ export function tideOf(window: BoardWindow, row: BoardRow): DrawnTide {
     const highest = Math.max(0, ...steps.map((step) => step.taken));
     return { steps, positions: Math.max(row.childCount, highest), levels: [] };
   }
-  const endMs = Date.parse(window.to);
   return {
     steps: sent.taken.map((step) => ({ atMs: Date.parse(step.at), taken: step.count })),
     positions: sent.positions,
-    levels: sent.temperature.map((level, index) => ({
-      startMs: Date.parse(level.at),
-      endMs: Date.parse(sent.temperature[index + 1]?.at ?? window.to) || endMs,
-      temperatureC: level.setTemperatureC,
-    })),
+    levels: levelsOf(sent.temperature),
   };
+}
+
+/** The level stretches of a line of corners; between two of them it slants. */
+export function levelsOf(corners: Tide['temperature']): DrawnTide['levels'] {
+  return corners.flatMap((corner, index) => {
+    const next = corners[index + 1];
+    return next?.setTemperatureC === corner.setTemperatureC
+      ? [
+          {
+            startMs: Date.parse(corner.at),
+            endMs: Date.parse(next.at),
+            temperatureC: corner.setTemperatureC,
+          },
+        ]
+      : [];
+  });
 }
