@@ -2,8 +2,11 @@ import type { JobsOptions } from 'bullmq';
 import type { PreparedJob } from './define-job.ts';
 import type { JobQueue, PlannedSchedule } from './job-queue.ts';
 import type { openBullmqBackend } from './bullmq-backend.ts';
+import { within } from './within.ts';
 
 const dayS = 86_400;
+/** The queue waits for a lost Redis without end; the relay holds locks and must not. */
+const patienceMs = 10_000;
 
 /** What the queue keeps of each job besides its payload. */
 function envelopeOf(job: PreparedJob) {
@@ -37,10 +40,11 @@ export function createBullmqJobQueue(
     async add(jobs) {
       // One by one: adding in bulk makes a temporary table, to which the runtime role has no right.
       for (const job of jobs) {
-        await queue.add(job.name, envelopeOf(job), {
+        const adding = queue.add(job.name, envelopeOf(job), {
           ...optionsOf(job),
           ...(job.jobId === null ? {} : { jobId: job.jobId }),
         });
+        await within(patienceMs, 'Handing a job to the queue', adding);
       }
     },
     async plan(schedules) {

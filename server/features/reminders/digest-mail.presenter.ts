@@ -115,7 +115,7 @@ ${group.lines.map(writeRow).join('\n')}
 </table>`,
   );
   return `<!doctype html>
-<html lang="en"><head><meta charset="utf-8"><title>${title}</title></head>
+<html lang="en"><head><meta charset="utf-8"><meta name="viewport" content="width=device-width"><title>${title}</title></head>
 <body style="margin:0;padding:24px;font-family:sans-serif;font-size:15px;line-height:1.5;color:#14262b;background:#fff">
 <h1 style="font-size:20px;margin:0">${title}</h1>
 ${tables.join('\n')}
