@@ -14,6 +14,10 @@ export const paths = {
     pattern: `${siteRoot}/requests/:id`,
     href: (site: string, id: number) => `/${site}/requests/${id}`,
   },
+  editRequest: {
+    pattern: `${siteRoot}/requests/:id/edit`,
+    href: (site: string, id: number) => `/${site}/requests/${id}/edit`,
+  },
   bookings: { pattern: `${siteRoot}/bookings`, href: (site: string) => `/${site}/bookings` },
   booking: {
     pattern: `${siteRoot}/bookings/:id`,

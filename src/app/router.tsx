@@ -21,6 +21,7 @@ const screens: RouteObject[] = [
   screen(paths.equipment.pattern, () => import('./routes/equipment.tsx')),
   screen(paths.instrument.pattern, () => import('./routes/instrument.tsx')),
   screen(paths.board.pattern, () => import('./routes/board.tsx')),
+  screen(paths.requests.pattern, () => import('./routes/requests.tsx')),
   screen(paths.bookings.pattern, () => import('./routes/bookings.tsx')),
   screen(paths.booking.pattern, () => import('./routes/booking.tsx')),
   screen(paths.load.pattern, () => import('./routes/load.tsx')),
@@ -30,6 +31,9 @@ const screens: RouteObject[] = [
   screen(paths.settings.pattern, () => import('./routes/settings.tsx')),
   screen(paths.help.pattern, () => import('./routes/help.tsx')),
   screen(paths.marks.pattern, () => import('./routes/marks.tsx')),
+  screen(paths.newRequest.pattern, () => import('./routes/new-request.tsx')),
+  screen(paths.editRequest.pattern, () => import('./routes/edit-request.tsx')),
+  screen(paths.request.pattern, () => import('./routes/request.tsx')),
   screen(paths.find.pattern, () => import('./routes/find.tsx')),
 ];
 

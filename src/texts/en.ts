@@ -6,6 +6,8 @@ import { gallery } from './en/gallery.ts';
 import { help } from './en/help.ts';
 import { layout } from './en/layout.ts';
 import { metrology } from './en/metrology.ts';
+import { requests } from './en/requests.ts';
+import { request } from './en/request.ts';
 import { session } from './en/session.ts';
 import { settings } from './en/settings.ts';
 import { shell } from './en/shell.ts';
@@ -21,6 +23,8 @@ export const en = {
   help,
   layout,
   metrology,
+  request,
+  requests,
   session,
   settings,
   shell,

@@ -1,0 +1,3 @@
+import { EditRequestPage } from '#src/features/request/components/request-form-page.tsx';
+
+export const Component = EditRequestPage;

@@ -1,0 +1,3 @@
+import { NewRequestPage } from '#src/features/request/components/request-form-page.tsx';
+
+export const Component = NewRequestPage;
