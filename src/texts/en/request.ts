@@ -197,6 +197,7 @@ export const request = {
   proposedHere: 'proposed',
   expired: 'These slots are over ten minutes old. Look again before you take one.',
   again: 'Look again',
+  later: 'Later slots',
   noSlots: 'No valid slot was found.',
   reasonsIn: (chambers: string) => `(${chambers})`,
   proposal: 'Proposed.',

@@ -75,8 +75,8 @@ export function freeCellsQuery(
   });
 }
 
-export function offersQuery(site: string, id: number, lotId: number, after: string) {
-  const input = { params: { site, id, lotId }, query: after === '' ? {} : { after } };
+export function offersQuery(site: string, id: number, lotId: number) {
+  const input = { params: { site, id, lotId } };
   return queryOptions({
     queryKey: apiKey(findOffers, input),
     queryFn: ({ signal }) => callApi(findOffers, { ...input, signal }),

@@ -31,7 +31,9 @@ type Row = {
   readonly blockedBy: NonNullable<OffersDto['blockedEarlier']>['blockedBy'] | null;
 };
 
-function rowsOf(found: OffersDto): readonly Row[] {
+const shownAtFirst = 3;
+
+function rowsOf(found: OffersDto, count: number): readonly Row[] {
   const { blockedEarlier } = found;
   return [
     ...(blockedEarlier === null
@@ -44,7 +46,7 @@ function rowsOf(found: OffersDto): readonly Row[] {
             blockedBy: blockedEarlier.blockedBy,
           },
         ]),
-    ...found.offers.map((offer, index) => ({
+    ...found.offers.slice(0, count).map((offer, index) => ({
       key: `${offer.chamberTag}-${offer.startAt}`,
       place: index + 1,
       offer,
@@ -140,6 +142,7 @@ function OffersTable(props: {
   const site = useSite();
   const { currentYear } = siteCalendar(useNow(), site.zone);
   const isExpired = useExpiry(found);
+  const [count, setCount] = useState(shownAtFirst);
   const heads = words.slotColumns;
   const time = (at: string) => formatInstant(at, { zone: site.zone, currentYear });
   return (
@@ -148,7 +151,7 @@ function OffersTable(props: {
       {found.offers.length === 0 ? <Reasons found={found} /> : null}
       <Table
         caption={words.slots}
-        rows={rowsOf(found)}
+        rows={rowsOf(found, count)}
         rowKey={(row) => row.key}
         rowState={(row) =>
           row.blockedBy !== null ? 'blocked' : row.place === 1 ? 'act' : undefined
@@ -204,6 +207,7 @@ function OffersTable(props: {
             head: '',
             label: words.actions,
             align: 'right',
+            nowrap: true,
             cell: (row) => (
               <Acts
                 row={row}
@@ -217,6 +221,16 @@ function OffersTable(props: {
         ]}
       />
       <div className="mp-acts mt-3">
+        {found.offers.length > count ? (
+          <Button
+            kind="link"
+            onClick={() => {
+              setCount(found.offers.length);
+            }}
+          >
+            {words.later}
+          </Button>
+        ) : null}
         <Button kind="link" busy={props.isBusy} onClick={props.onAgain}>
           {words.again}
         </Button>
@@ -233,8 +247,7 @@ export function OffersSection(props: {
   onProposed: () => void;
 }) {
   const site = useSite();
-  const [after] = useState('');
-  const offers = useQuery(offersQuery(site.code, props.request.id, props.lotId, after));
+  const offers = useQuery(offersQuery(site.code, props.request.id, props.lotId));
   const failure = tableError(offers);
   const found = offers.data;
   const best = found?.offers[0]?.estimate;
