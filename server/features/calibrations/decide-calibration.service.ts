@@ -31,11 +31,12 @@ export async function approveCalibration(
 ): Promise<Decision> {
   const { actor, site, id } = who;
   return deps.transact(async (tx) => {
-    const { record } = await requireRecord({ db: tx }, site, id);
+    const row = await requireRecord({ db: tx }, site, id);
+    const { record } = row;
     // Before the decision is read again: no booking may slip in between, and of two deciders one waits.
     const places = await lockInstruments(tx, [record.instrumentId]);
     await decide(deps, tx, who, wish.version, { state: 'approved' });
-    await replace(deps, tx, site, record);
+    await replace(deps, tx, row);
     await moveDuties(deps, tx, site, record.instrumentId);
     const touched = await reassessBookings(deps, tx, site, places, actor);
     return {
@@ -107,19 +108,14 @@ async function requireUndecided(tx: Tx, row: RecordRow): Promise<void> {
   }
 }
 
-async function replace(
-  deps: Changing,
-  tx: Tx,
-  site: SiteScope,
-  { id, replacesId }: RecordRow['record'],
-): Promise<void> {
+async function replace(deps: Changing, tx: Tx, row: RecordRow): Promise<void> {
+  const { replacesId } = row.record;
   if (replacesId === null || (await markReplaced(tx, replacesId, deps.clock.now()))) {
     return;
   }
-  const current = await describeRecord({ db: tx }, await requireRecord({ db: tx }, site, id));
   throw problem('calibration.state', {
     detail: `Calibration ${replacesId}, which this one corrects, has been replaced meanwhile. Refuse this record and correct the newer one.`,
-    current,
+    current: await describeRecord({ db: tx }, row),
   });
 }
 

@@ -1,5 +1,5 @@
 import { eq } from 'drizzle-orm';
-import { afterAll, beforeAll, beforeEach, expect, test } from 'vitest';
+import { afterAll, afterEach, beforeAll, beforeEach, expect, test } from 'vitest';
 import { instrumentsTable } from '#server/db/tables/instrument.table.ts';
 import { unavailabilitiesTable } from '#server/db/tables/outage.table.ts';
 import { listAuditEvents } from '#shared/contracts/audit.contract.ts';
@@ -27,6 +27,13 @@ beforeAll(async () => {
 beforeEach(async () => {
   bench = await buildBench(app);
   source = bench.chamber.chamberTag.replace('C', 'S');
+});
+afterEach(async () => {
+  // Only a few chambers are offered at once: this one makes room for the next test's.
+  await app.db
+    .update(instrumentsTable)
+    .set({ state: 'retired' })
+    .where(eq(instrumentsTable.id, bench.chamber.chamberId));
 });
 afterAll(() => app.stop());
 
