@@ -18,6 +18,7 @@ function screen(pattern: string, load: () => Promise<Screen>): RouteObject {
 }
 
 const screens: RouteObject[] = [
+  screen(paths.today.pattern, () => import('./routes/today.tsx')),
   screen(paths.equipment.pattern, () => import('./routes/equipment.tsx')),
   screen(paths.instrument.pattern, () => import('./routes/instrument.tsx')),
   screen(paths.board.pattern, () => import('./routes/board.tsx')),

@@ -11,6 +11,7 @@ import { request } from './en/request.ts';
 import { session } from './en/session.ts';
 import { settings } from './en/settings.ts';
 import { shell } from './en/shell.ts';
+import { today } from './en/today.ts';
 import { ui } from './en/ui.ts';
 
 /** Every word the client shows; a feature adds one file in `en/` and one line here. */
@@ -28,5 +29,6 @@ export const en = {
   session,
   settings,
   shell,
+  today,
   ui,
 } as const;

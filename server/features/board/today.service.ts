@@ -66,7 +66,7 @@ export async function getToday(
       ...(await outageHappenings(deps, site, span, calendar)),
       ...dueHappenings(duties, calendar, day),
     ].toSorted((first, second) => first.at.localeCompare(second.at)),
-    waits: await listWaits(deps, actor, site),
+    waits: await listWaits(deps, actor, site, calendar),
     fallsDue: await describeFallsDue(deps, site, duties, nowMs),
   };
 }
@@ -93,7 +93,7 @@ async function loadHappenings(
       kind: kinds[row.phase],
       what: `${verbs[row.phase](row.chamberTag)}${numbersOf(inside, actor, site)}`,
       touches: contentsOf(inside, row.setTempMdegc, actor, site),
-      state: isOver ? 'planned for earlier' : 'planned',
+      state: isOver ? 'was planned' : 'planned',
       tone: isOver ? 'ink' : 'heron',
       href: `/loads/${row.loadId}`,
     };

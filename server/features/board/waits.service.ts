@@ -2,6 +2,9 @@ import type { SignedIn, SiteScope } from '#server/actor.ts';
 import type { Deps } from '#server/deps.ts';
 import { listWaitingDeviations } from '#server/features/registers/deviations.service.ts';
 import type { Today } from '#shared/contracts/board.contract.ts';
+import { formatSiteDay } from '#shared/domain/calendar/format-site-day.ts';
+import { siteDay } from '#shared/domain/calendar/site-day.ts';
+import type { CalendarIndex } from '#shared/domain/calendar/types.ts';
 import { checkRules } from '#shared/domain/checks/check-rules.ts';
 import { may } from '#shared/domain/policies/may.ts';
 import {
@@ -20,6 +23,7 @@ export async function listWaits(
   deps: Pick<Deps, 'clock' | 'db'>,
   actor: SignedIn,
   site: SiteScope,
+  calendar: CalendarIndex,
 ): Promise<Wait[]> {
   const now = deps.clock.now();
   const requests = await listOpenRequests(deps.db, site.id);
@@ -30,7 +34,7 @@ export async function listWaits(
     new Date(now.getTime() + 2 * dayMs),
   );
   const waits = [
-    ...requests.flatMap((row) => requestWait(row, actor, site)),
+    ...requests.flatMap((row) => requestWait(row, actor, site, calendar)),
     ...bookingWaits(watched, actor, site),
     ...(await signatureWaits(deps, actor, site)),
     ...(await deviationWaits(deps, actor, site)),
@@ -43,6 +47,7 @@ function requestWait(
   { request, requesterName }: OpenRequestRow,
   actor: SignedIn,
   site: SiteScope,
+  calendar: CalendarIndex,
 ): Wait[] {
   const href = `/requests/${request.id}`;
   if (request.state === 'draft') {
@@ -72,7 +77,7 @@ function requestWait(
         {
           kind: 'request',
           what: `Request ${request.id} wants a slot`,
-          why: `${requesterName} asked${neededBy(request.neededByAt)}.`,
+          why: `${requesterName} asked${neededBy(request.neededByAt, calendar)}.`,
           since,
           action: 'Find a slot',
           href,
@@ -90,8 +95,8 @@ function requestWait(
       ];
 }
 
-function neededBy(at: Date | null): string {
-  return at === null ? '' : ` and needs it by ${at.toISOString().slice(0, 10)}`;
+function neededBy(at: Date | null, calendar: CalendarIndex): string {
+  return at === null ? '' : ` and needs it by ${formatSiteDay(siteDay(calendar, at.getTime()))}`;
 }
 
 function bookingWaits(

@@ -33,6 +33,19 @@ function SortHead(props: {
   );
 }
 
+function HeadWords<Row>(props: { column: Column<Row> }) {
+  const { head, label, scale } = props.column;
+  if (scale !== undefined) {
+    return (
+      <>
+        {scale}
+        <span className="mp-hidden">{head}</span>
+      </>
+    );
+  }
+  return head === '' ? <span className="mp-hidden">{label}</span> : head;
+}
+
 /** Roles are written out because the stacked phone form takes the table display away. */
 export function TableHead<Row>(props: {
   columns: readonly Column<Row>[];
@@ -63,10 +76,8 @@ export function TableHead<Row>(props: {
                     onSort({ key: column.key, direction: next });
                   }}
                 />
-              ) : column.head === '' ? (
-                <span className="mp-hidden">{column.label}</span>
               ) : (
-                column.head
+                <HeadWords column={column} />
               )}
             </th>
           );

@@ -14,6 +14,8 @@ export type Column<Row> = {
   /** Empty for a column of actions; give it `label` then. */
   readonly head: string;
   readonly label?: string | undefined;
+  /** Drawn in the head instead of its words, which are then read out only: the scale of a drawing. */
+  readonly scale?: ReactNode;
   readonly cell: (row: Row) => ReactNode;
   readonly align?: 'left' | 'right' | undefined;
   /** Measured values: mono, tabular, never wrapped. */

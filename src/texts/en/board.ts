@@ -7,7 +7,8 @@ export const board = {
   view: 'Length shown',
   views: { day: 'Day', week: 'Week', fortnight: 'Fortnight' },
   groups: { chambers: 'Chambers', sources: 'Sources', meters: 'Meters' },
-  groupCount: (count: number, open: number) => (open === 0 ? `${count}` : `${count}, ${open} open`),
+  groupCount: (count: number, open: number) =>
+    open === 0 ? `${count} shown` : `${count} shown, ${open} open`,
   filterText: 'Tag contains',
   reportBreakdown: 'Report a breakdown',
   bookByForm: 'Book by form',
