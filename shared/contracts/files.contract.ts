@@ -12,7 +12,7 @@ import { defineContract } from './define-contract.ts';
 
 export const acceptedMediaTypes = ['application/pdf', 'image/png', 'image/jpeg'] as const;
 export type AcceptedMediaType = (typeof acceptedMediaTypes)[number];
-export const maxFileBytes = 20 * 1024 * 1024;
+export const maxFileBytes = 20_000_000;
 
 export const fileSchema = z.object({
   id: recordNumber,

@@ -23,6 +23,7 @@ const badges = ['', ...calibrationBadges] as const;
 const kinds = ['', ...instrumentKinds] as const;
 const flags = ['', 'true'] as const;
 const words = t.metrology;
+const rowsAtOnce = 20;
 
 function useFilters() {
   const [badge, setBadge] = useUrlChoice('badge', badges, '');
@@ -141,6 +142,7 @@ function useColumns(): readonly Column<DutyRow>[] {
     {
       key: 'duty',
       head: heads.duty,
+      nowrap: true,
       cell: (row) => (
         <>
           {words.calibration} <span className="mp-note">{row.scope}</span>
@@ -172,7 +174,12 @@ function useColumns(): readonly Column<DutyRow>[] {
       align: 'right',
       cell: (row) => words.riskOf(row.bookingsPastDue, row.atRisk),
     },
-    { key: 'custodian', head: heads.custodian, cell: (row) => row.custodian?.name ?? '' },
+    {
+      key: 'custodian',
+      head: heads.custodian,
+      nowrap: true,
+      cell: (row) => row.custodian?.name ?? '',
+    },
     {
       key: 'act',
       head: '',
@@ -192,6 +199,7 @@ export function DutiesSection() {
   const { badge, kind, before, mine } = filters.values;
   const list = useInfiniteQuery(
     dutiesQuery(site.code, {
+      limit: rowsAtOnce,
       ...(badge === '' ? {} : { badge }),
       ...(kind === '' ? {} : { kind }),
       ...(before === '' ? {} : { dueBefore: before }),

@@ -90,44 +90,46 @@ function WhenAndBy(props: { form: Form; intervalMonths: number | null }) {
   const { draft, dueOn, set, errorOf } = props.form;
   return (
     <Section title={words.when}>
-      <Field label={words.performedOn} error={errorOf('performedOn')}>
-        <DateInput
-          value={draft.performedOn}
-          onChange={(event) => {
-            set({ performedOn: event.target.value });
-          }}
-        />
-      </Field>
-      <Field
-        label={words.dueOn}
-        error={errorOf('dueOn')}
-        help={
-          props.intervalMonths === null ? words.dueHelpNone : words.dueHelp(props.intervalMonths)
-        }
-      >
-        <DateInput
-          value={dueOn}
-          onChange={(event) => {
-            set({ dueOn: event.target.value });
-          }}
-        />
-      </Field>
-      <Field label={words.provider} error={errorOf('provider')} help={words.providerHelp}>
-        <TextInput
-          value={draft.provider}
-          onChange={(event) => {
-            set({ provider: event.target.value });
-          }}
-        />
-      </Field>
-      <Field label={words.certificateNumber} error={errorOf('certificateNumber')}>
-        <TextInput
-          value={draft.certificateNumber}
-          onChange={(event) => {
-            set({ certificateNumber: event.target.value });
-          }}
-        />
-      </Field>
+      <div className="max-w-[560px]">
+        <Field label={words.performedOn} error={errorOf('performedOn')}>
+          <DateInput
+            value={draft.performedOn}
+            onChange={(event) => {
+              set({ performedOn: event.target.value });
+            }}
+          />
+        </Field>
+        <Field
+          label={words.dueOn}
+          error={errorOf('dueOn')}
+          help={
+            props.intervalMonths === null ? words.dueHelpNone : words.dueHelp(props.intervalMonths)
+          }
+        >
+          <DateInput
+            value={dueOn}
+            onChange={(event) => {
+              set({ dueOn: event.target.value });
+            }}
+          />
+        </Field>
+        <Field label={words.provider} error={errorOf('provider')} help={words.providerHelp}>
+          <TextInput
+            value={draft.provider}
+            onChange={(event) => {
+              set({ provider: event.target.value });
+            }}
+          />
+        </Field>
+        <Field label={words.certificateNumber} error={errorOf('certificateNumber')}>
+          <TextInput
+            value={draft.certificateNumber}
+            onChange={(event) => {
+              set({ certificateNumber: event.target.value });
+            }}
+          />
+        </Field>
+      </div>
     </Section>
   );
 }
@@ -195,14 +197,16 @@ export function RecordForm(props: FormProps) {
         />
       </Section>
       <Section title={words.finish} note={<p>{words.finishNote}</p>}>
-        <Field label={words.note} error={errorOf('note')} optional>
-          <TextArea
-            value={draft.note}
-            onChange={(event) => {
-              set({ note: event.target.value });
-            }}
-          />
-        </Field>
+        <div className="max-w-[720px]">
+          <Field label={words.note} error={errorOf('note')} optional>
+            <TextArea
+              value={draft.note}
+              onChange={(event) => {
+                set({ note: event.target.value });
+              }}
+            />
+          </Field>
+        </div>
         {form.failure === undefined ? null : (
           <Notice kind="stop" role="alert">
             {form.failure}

@@ -49,16 +49,18 @@ export function RecordPage() {
     <Page title={words.newTitle} intro={<p>{words.newIntro}</p>}>
       {replacesId === null ? null : <Notice kind="info">{words.correcting(replacesId)}</Notice>}
       <Section title={words.instrument}>
-        <Field label={words.instrument} help={words.instrumentHelp}>
-          <TextInput
-            value={tag}
-            maxLength={4}
-            autoFocus={tag === ''}
-            onChange={(event) => {
-              setTag(event.target.value.trim().toUpperCase());
-            }}
-          />
-        </Field>
+        <div className="max-w-[560px]">
+          <Field label={words.instrument} help={words.instrumentHelp}>
+            <TextInput
+              value={tag}
+              maxLength={4}
+              autoFocus={tag === ''}
+              onChange={(event) => {
+                setTag(event.target.value.trim().toUpperCase());
+              }}
+            />
+          </Field>
+        </div>
       </Section>
       <ForInstrument tag={tag} replacesId={replacesId} />
     </Page>

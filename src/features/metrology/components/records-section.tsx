@@ -19,6 +19,7 @@ import { ConformityWord, RecordStateWord } from './calibration-record-state.tsx'
 const shownStates = calibrationStates.filter((state) => state !== 'draft');
 const choices = ['', ...shownStates] as const;
 const words = t.metrology;
+const rowsAtOnce = 20;
 
 /** Calibration records, to find one by tag, certificate or state. */
 export function RecordsSection() {
@@ -29,6 +30,7 @@ export function RecordsSection() {
   const settled = useDebouncedText(text, 250);
   const list = useInfiniteQuery(
     calibrationsQuery(site.code, {
+      limit: rowsAtOnce,
       ...(state === '' ? {} : { state }),
       ...(settled === '' ? {} : { text: settled }),
     }),
