@@ -70,6 +70,21 @@ export async function listTaken(reader: Reader, unitIds: readonly number[], wind
 }
 export type TakenRow = Awaited<ReturnType<typeof listTaken>>[number];
 
+/** Every unit that bookings hold, drawn or not. */
+export async function listHeldUnits(reader: Reader, bookingIds: readonly number[]) {
+  const t = allocationsTable;
+  return reader
+    .select({
+      bookingId: sql<number>`${t.bookingId}`,
+      unitId: t.unitId,
+      instrumentId: unitsTable.instrumentId,
+    })
+    .from(t)
+    .innerJoin(unitsTable, eq(unitsTable.id, t.unitId))
+    .where(and(eq(t.live, true), inArray(t.bookingId, [...bookingIds])));
+}
+export type HeldUnitRow = Awaited<ReturnType<typeof listHeldUnits>>[number];
+
 /** The bookings as they are drawn; the frozen estimate itself is not read. */
 export async function listDrawnBookings(reader: Reader, bookingIds: readonly number[]) {
   if (bookingIds.length === 0) {

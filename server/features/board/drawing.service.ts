@@ -7,6 +7,7 @@ import type { BoardBar, BoardBlock } from '#shared/contracts/board.contract.ts';
 import type { Span } from '#shared/domain/intervals/types.ts';
 import { seesProject } from '#shared/domain/policies/sees-project.ts';
 import { drawBlocks } from './blocks.presenter.ts';
+import { findRiskStarts } from './risk.service.ts';
 import { readUnavailability } from './unavailability.service.ts';
 import { listDrawnBookings, listPhases, listTaken } from './board.repository.ts';
 import type { DrawnBookingRow, DrawnPhaseRow, TakenRow } from './board.repository.ts';
@@ -58,7 +59,7 @@ export async function drawRows(
 }
 
 async function drawBars(
-  deps: Pick<Deps, 'db'>,
+  deps: Pick<Deps, 'clock' | 'db'>,
   actor: SignedIn,
   site: SiteScope,
   input: { readonly rows: readonly DrawnRow[]; readonly taken: readonly TakenRow[] },
@@ -83,6 +84,11 @@ async function drawBars(
     await listPhases(deps.db, [...new Set(bookings.map(({ loadId }) => loadId))]),
     (row) => row.loadId,
   );
+  const riskStarts = await findRiskStarts(
+    deps,
+    site,
+    bookings.filter((booking) => booking.atRisk && maySeeRequest(actor, site.code, booking)),
+  );
   return wanted.flatMap(({ row, bookingId }): BoardBar[] => {
     const booking = byId.get(bookingId ?? 0);
     return booking === undefined
@@ -91,6 +97,7 @@ async function drawBars(
           presentBar(row.key, booking, {
             phases: phases.get(booking.loadId) ?? [],
             isVisible: maySeeRequest(actor, site.code, booking),
+            riskFromMs: riskStarts.get(booking.id) ?? null,
           }),
         ];
   });
@@ -99,9 +106,13 @@ async function drawBars(
 function presentBar(
   rowKey: string,
   booking: DrawnBookingRow,
-  facts: { readonly phases: readonly DrawnPhaseRow[]; readonly isVisible: boolean },
+  facts: {
+    readonly phases: readonly DrawnPhaseRow[];
+    readonly isVisible: boolean;
+    readonly riskFromMs: number | null;
+  },
 ): BoardBar {
-  const { isVisible, phases } = facts;
+  const { isVisible, phases, riskFromMs } = facts;
   const hold = phases.find(({ phase }) => phase === 'hold');
   const iso = (ms: number) => new Date(ms).toISOString();
   return {
@@ -110,7 +121,7 @@ function presentBar(
     isVisible,
     state: booking.state,
     isAtRisk: booking.atRisk,
-    atRiskFrom: null,
+    atRiskFrom: riskFromMs === null ? null : iso(riskFromMs),
     atRiskReason: isVisible ? booking.atRiskReason : null,
     title: isVisible
       ? `${booking.id} · ${booking.cellCount ?? 0} × ${booking.cellTypeName ?? ''}`

@@ -2,6 +2,7 @@ import { formatTemperature } from '#src/lib/format-quantity.ts';
 import { linePath } from './chart-scale.ts';
 import {
   levelStrokes,
+  placeLevelNames,
   tidePoints,
   type LevelStroke,
   type SetLevel,
@@ -12,24 +13,14 @@ import {
 export type { SetLevel, TideStep, TimeWindow } from './tide-line.view.ts';
 
 const foot = 32;
-const full = 11;
+const full = 16;
 
-function Level(props: { stroke: LevelStroke; isNamed: boolean }) {
-  const { stroke } = props;
+function Level({ stroke }: { stroke: LevelStroke }) {
   if (stroke.kind === 'slant') {
     const [from, to] = stroke.isRising ? [10, 3] : [3, 10];
     return <path d={`M${stroke.x1} ${from}L${stroke.x2} ${to}`} stroke="var(--ink-2)" />;
   }
-  return (
-    <>
-      <path d={`M${stroke.x1} 3H${stroke.x2}`} stroke="var(--ink-2)" />
-      {props.isNamed && stroke.x2 - stroke.x1 > 44 ? (
-        <text x={stroke.x1 + 6} y="13.5" className="mp-axis-strong mp-halo">
-          {stroke.text}
-        </text>
-      ) : null}
-    </>
-  );
+  return <path d={`M${stroke.x1} 3H${stroke.x2}`} stroke="var(--ink-2)" />;
 }
 
 /** A chamber's row: the tide of positions taken under the level of its set temperature. */
@@ -58,7 +49,12 @@ export function TideLine(props: {
       <path d={`${line}V${foot}H0z`} fill="var(--heron-wash)" />
       <path d={line} fill="none" stroke="var(--heron)" strokeWidth="1.5" />
       {strokes.map((stroke) => (
-        <Level key={`${stroke.kind}-${stroke.x1}`} stroke={stroke} isNamed />
+        <Level key={`${stroke.kind}-${stroke.x1}`} stroke={stroke} />
+      ))}
+      {placeLevelNames(strokes, width).map((name) => (
+        <text key={name.x} x={name.x} y="13.5" className="mp-axis-strong mp-halo">
+          {name.text}
+        </text>
       ))}
     </svg>
   );

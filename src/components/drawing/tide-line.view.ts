@@ -66,3 +66,36 @@ export function levelStrokes(
     return [stroke, { kind: 'slant', x1: stroke.x2, x2: cut(next.startMs), isRising }];
   });
 }
+
+export type LevelName = { readonly x: number; readonly text: string };
+
+const monoLetter = 6.65;
+const inset = 6;
+
+/**
+ * Where the values of levels are written: in the level, pushed on where the name before reaches into
+ * it. A short level keeps its name too, because it is the one that stands out; a name that finds no
+ * room at all is left out.
+ */
+export function placeLevelNames(
+  strokes: readonly LevelStroke[],
+  width: number,
+): readonly LevelName[] {
+  const names: LevelName[] = [];
+  let free = 0;
+  for (const stroke of strokes) {
+    if (stroke.kind !== 'level') {
+      continue;
+    }
+    const length = stroke.text.length * monoLetter;
+    const isShort = stroke.x2 - stroke.x1 < length + 2 * inset;
+    const wished = isShort ? stroke.x1 + (stroke.x2 - stroke.x1 - length) / 2 : stroke.x1 + inset;
+    const x = Math.max(wished, free);
+    const isClear = isShort ? x === wished : x + length <= stroke.x2;
+    if (isClear && x + length <= width) {
+      names.push({ x, text: stroke.text });
+      free = x + length + inset;
+    }
+  }
+  return names;
+}

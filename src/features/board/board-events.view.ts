@@ -1,6 +1,6 @@
 import type { EventInput } from '@fullcalendar/core';
-import type { BoardWindow } from '#shared/contracts/board.contract.ts';
-import { formatInstant } from '#src/lib/format-date.ts';
+import type { BoardBar, BoardWindow } from '#shared/contracts/board.contract.ts';
+import { formatSpan } from '#src/lib/format-date.ts';
 import { t } from '#src/texts/t.ts';
 import type { BoardLine } from './board-rows.view.ts';
 import { wallClockMs, type BoardSpan } from './board-window.view.ts';
@@ -14,13 +14,11 @@ export type DrawnThing =
 
 export const staffedRowKey = 'staffed';
 
-function nameOfBar(bar: BoardWindow['bars'][number], zone: string): string {
+type Words = { readonly zone: string; readonly currentYear: number };
+
+function nameOfBar(bar: BoardWindow['bars'][number], words: Words): string {
   const number = bar.isVisible ? bar.title : `${bar.bookingId} (${t.board.taken})`;
-  const span = t.board.booking(
-    number,
-    formatInstant(bar.startAt, { zone }),
-    formatInstant(bar.endAt, { zone }),
-  );
+  const span = t.board.booking(number, formatSpan(bar.startAt, bar.endAt, words));
   return bar.atRiskReason === null ? span : `${span}. ${t.board.atRisk(bar.atRiskReason)}`;
 }
 
@@ -28,7 +26,7 @@ function nameOfBar(bar: BoardWindow['bars'][number], zone: string): string {
 export function boardEvents(
   window: BoardWindow,
   lines: readonly BoardLine[],
-  zone: string,
+  words: Words,
 ): EventInput[] {
   const barRows = new Set(lines.filter((line) => line.kind === 'bars').map((line) => line.key));
   const allRows = new Set(lines.map((line) => line.key));
@@ -40,7 +38,8 @@ export function boardEvents(
             resourceId: bar.rowKey,
             start: bar.startAt,
             end: bar.endAt,
-            title: nameOfBar(bar, zone),
+            title: nameOfBar(bar, words),
+            classNames: bar.isVisible ? [] : ['mp-board-foreign'],
             extendedProps: { thing: { kind: 'bar', index } satisfies DrawnThing },
           },
         ]
@@ -89,22 +88,33 @@ export function boardEvents(
   return [...tides, ...blocks, ...bars, ...staffed];
 }
 
-export type Placed = { readonly width: number; readonly hiddenLeft: number };
+export type Ruling = {
+  readonly span: Pick<BoardSpan, 'startMs' | 'endMs'>;
+  readonly zone: string;
+  /** Pixels of the whole time axis. */
+  readonly width: number;
+};
+export type Placed = {
+  readonly width: number;
+  readonly hiddenLeft: number;
+  /** Pixels free behind it, to the next thing in its row or to the edge of the window. */
+  readonly room: number;
+};
 
-/** Pixel width of a thing from door to door, and how much of it lies before the window. */
+/** Pixel width of a bar from door to door, how much lies before the window, what is free behind. */
 export function placeInWindow(
-  startAt: string,
-  endAt: string,
-  span: Pick<BoardSpan, 'startMs' | 'endMs'>,
-  zone: string,
-  timelineWidth: number,
+  bar: Pick<BoardBar, 'startAt' | 'endAt'>,
+  nextMs: number | null,
+  { span, zone, width: timelineWidth }: Ruling,
 ): Placed {
   const wall = (ms: number) => wallClockMs(ms, zone);
   const perMs = timelineWidth / (wall(span.endMs) - wall(span.startMs));
-  const start = wall(Date.parse(startAt));
-  const width = (wall(Date.parse(endAt)) - start) * perMs;
+  const start = wall(Date.parse(bar.startAt));
+  const end = wall(Date.parse(bar.endAt));
+  const freeUntil = wall(Math.min(nextMs ?? span.endMs, span.endMs));
   return {
-    width: Math.max(2, width),
+    width: Math.max(2, (end - start) * perMs),
     hiddenLeft: Math.max(0, (wall(span.startMs) - start) * perMs),
+    room: Math.max(0, (freeUntil - end) * perMs),
   };
 }

@@ -1,4 +1,10 @@
-import type { BoardBar, BoardRow, BoardWindow, Tide } from '#shared/contracts/board.contract.ts';
+import type {
+  BoardBar,
+  BoardBlock,
+  BoardRow,
+  BoardWindow,
+  Tide,
+} from '#shared/contracts/board.contract.ts';
 import type { TideStep } from '#src/components/drawing/tide-line.view.ts';
 
 /** A line of the drawn board: a heading, an instrument folded or open, or one channel or position. */
@@ -96,4 +102,23 @@ export function levelsOf(corners: Tide['temperature']): DrawnTide['levels'] {
         ]
       : [];
   });
+}
+
+/** Blocks whose sentence stands already on the row they fold under: said once, drawn on each. */
+export function saidAbove(
+  rows: readonly BoardRow[],
+  blocks: readonly BoardBlock[],
+): ReadonlySet<number> {
+  const parentOf = new Map(rows.map((row) => [row.key, row.parentKey]));
+  const said = new Set(blocks.map((block) => nameBlock(block, block.rowKey)));
+  return new Set(
+    blocks.flatMap((block, index) => {
+      const parentKey = parentOf.get(block.rowKey) ?? null;
+      return parentKey !== null && said.has(nameBlock(block, parentKey)) ? [index] : [];
+    }),
+  );
+}
+
+function nameBlock({ kind, startAt, sentence }: BoardBlock, rowKey: string): string {
+  return JSON.stringify([rowKey, kind, startAt, sentence]);
 }

@@ -1,8 +1,11 @@
 import { afterAll, beforeAll, expect, test } from 'vitest';
+import { eq } from 'drizzle-orm';
+import { bookingsTable } from '#server/db/tables/booking.table.ts';
 import { getBoard } from '#shared/contracts/board.contract.ts';
 import { cancelBooking } from '#shared/contracts/bookings.contract.ts';
 import type { BookingDto } from '#shared/contracts/bookings.contract.ts';
 import { reportBreakdown } from '#shared/contracts/equipment.contract.ts';
+import { calibrate } from '#tests/support/build-bookable.ts';
 import { buildBench } from '#tests/support/build-bench.ts';
 import type { Bench } from '#tests/support/build-bench.ts';
 import { startTestApp } from '#tests/support/test-app.ts';
@@ -140,7 +143,27 @@ test('a breakdown puts the booking at risk, and only who sees the project reads 
   const [own] = (await look({ open: chamber })).bars;
   expect(own?.isAtRisk).toBe(true);
   expect(own?.atRiskReason).toContain(meter);
+  // It broke before the booking begins.
+  expect(own?.atRiskFrom).toBe(booking.startAt);
   const stranger = await bench.app.signInAs({ roles: ['engineer'] });
   const [foreign] = (await look({ open: chamber }, stranger)).bars;
   expect(foreign).toMatchObject({ isAtRisk: true, atRiskReason: null, atRiskFrom: null });
+});
+
+test('a booking that runs past a due day is at risk from the midnight it ends with', async () => {
+  const other = await buildBench(bench.app);
+  const made = await other.book(await other.request(), { startAt: '2026-03-06T15:00:00.000Z' });
+  expect(Date.parse(made.endAt)).toBeGreaterThan(Date.parse('2026-03-07T00:00:00Z'));
+  const { db } = bench.app;
+  await db
+    .update(bookingsTable)
+    .set({ atRisk: true, atRiskReason: 'The source falls due while it runs.' })
+    .where(eq(bookingsTable.id, made.id));
+  await calibrate(db, other.keepers, other.chamber.sourceInstrumentId, 'source', {
+    performedOn: '2026-03-01',
+    dueOn: '2026-03-06',
+  });
+  const { bars } = await look({ open: other.chamber.chamberTag }, other.engineer);
+  const bar = bars.find(({ bookingId }) => bookingId === made.id);
+  expect(bar?.atRiskFrom).toBe('2026-03-07T00:00:00.000Z');
 });

@@ -84,7 +84,13 @@ export function BoardPage() {
         <EmptyState>{t.board.nothing}</EmptyState>
       ) : (
         <>
-          <BoardTimeline data={board.data} span={span} open={state.open} onToggle={state.toggle} />
+          <BoardTimeline
+            data={board.data}
+            span={span}
+            nowMs={nowMs}
+            open={state.open}
+            onToggle={state.toggle}
+          />
           <RowPaging state={state} shown={board.data.rows.length} rowCount={board.data.rowCount} />
         </>
       )}

@@ -3,18 +3,21 @@ import luxonPlugin from '@fullcalendar/luxon3';
 import FullCalendar from '@fullcalendar/react';
 import type { ResourceInput } from '@fullcalendar/resource';
 import resourceTimelinePlugin from '@fullcalendar/resource-timeline';
-import { useMemo } from 'react';
+import { useMemo, useState } from 'react';
 import { useNavigate } from 'react-router-dom';
 import { z } from 'zod';
-import type { BoardWindow } from '#shared/contracts/board.contract.ts';
+import type { BoardBlock, BoardWindow } from '#shared/contracts/board.contract.ts';
 import { TideLine } from '#src/components/drawing/tide-line.tsx';
 import { useElementWidth } from '#src/hooks/use-element-width.ts';
 import { useSite } from '#src/hooks/use-site.ts';
+import { siteCalendar } from '#src/lib/format-date.ts';
 import { t } from '#src/texts/t.ts';
 import '#src/styles/board.css';
 import { boardEvents, placeInWindow, staffedRowKey } from '../board-events.view.ts';
-import { boardLines, tideOf, type BoardLine } from '../board-rows.view.ts';
+import { boardLines, saidAbove, tideOf, type BoardLine } from '../board-rows.view.ts';
+import { nameBar, nextInRowMs } from '../board-bar.view.ts';
 import { wallClockMs, type BoardSpan } from '../board-window.view.ts';
+import { BlockSentence } from './block-sentence.tsx';
 import { BoardBar } from './board-bar.tsx';
 import { BoardRowLabel } from './board-row-label.tsx';
 
@@ -26,6 +29,8 @@ const thingSchema = z.discriminatedUnion('kind', [
 ]);
 
 const leastTimelineWidth = 620;
+/** Where the axis is wider than the screen it begins a little before now. */
+const lookBackMs = 4 * 3_600_000;
 
 type Drawing = {
   readonly data: BoardWindow;
@@ -33,6 +38,9 @@ type Drawing = {
   readonly zone: string;
   readonly width: number;
   readonly lines: ReadonlyMap<string, BoardLine>;
+  readonly said: ReadonlySet<number>;
+  /** Blocks whose sentence is written in their row. */
+  readonly written: readonly BoardBlock[];
 };
 
 /** Draws one calendar event: a booking, the words of a block, or the tide of a row. */
@@ -42,11 +50,26 @@ function drawEvent(arg: EventContentArg, drawing: Drawing) {
   if (thing.kind === 'bar') {
     const bar = data.bars[thing.index];
     return bar === undefined ? null : (
-      <BoardBar bar={bar} {...placeInWindow(bar.startAt, bar.endAt, span, zone, width)} />
+      <BoardBar
+        bar={bar}
+        name={nameBar(bar, data.bars)}
+        {...placeInWindow(bar, nextInRowMs(bar, data.bars, drawing.written), drawing)}
+      />
     );
   }
   if (thing.kind === 'block') {
-    return <span className="mp-board-sentence">{data.blocks[thing.index]?.sentence}</span>;
+    const block = data.blocks[thing.index];
+    if (block === undefined) {
+      return null;
+    }
+    const next = nextInRowMs(block, [], data.blocks);
+    return (
+      <BlockSentence
+        text={block.sentence}
+        isSaid={drawing.said.has(thing.index)}
+        {...placeInWindow(block, next, drawing)}
+      />
+    );
   }
   if (thing.kind === 'staffed') {
     return null;
@@ -76,14 +99,17 @@ function drawEvent(arg: EventContentArg, drawing: Drawing) {
 export function BoardTimeline(props: {
   data: BoardWindow;
   span: BoardSpan;
+  nowMs: number;
   open: ReadonlySet<string>;
   onToggle: (key: string) => void;
 }) {
   const { data, span } = props;
   const site = useSite();
   const navigate = useNavigate();
+  const { nowMs } = props;
+  const { currentYear } = siteCalendar(nowMs, site.zone);
   const [frame, frameWidth] = useElementWidth<HTMLDivElement>(1392);
-  const labelWidth = frameWidth < 720 ? 132 : 184;
+  const labelWidth = frameWidth < 720 ? 108 : 184;
   const slotCount = (span.dayCount * 24) / span.slotHours;
   const slotWidth = Math.max(
     Math.floor(Math.max(leastTimelineWidth, frameWidth - labelWidth - 1) / slotCount),
@@ -91,7 +117,10 @@ export function BoardTimeline(props: {
   );
   const timelineWidth = Math.max(slotWidth * slotCount, frameWidth - labelWidth - 1);
   const lines = useMemo(() => boardLines(data.rows, props.open), [data.rows, props.open]);
-  const events = useMemo(() => boardEvents(data, lines, site.zone), [data, lines, site.zone]);
+  const events = useMemo(
+    () => boardEvents(data, lines, { zone: site.zone, currentYear }),
+    [data, lines, site.zone, currentYear],
+  );
   const byKey = useMemo(() => new Map(lines.map((line) => [line.key, line])), [lines]);
   const resources = useMemo<ResourceInput[]>(
     () => [
@@ -100,7 +129,25 @@ export function BoardTimeline(props: {
     ],
     [lines],
   );
-  const drawing: Drawing = { data, span, zone: site.zone, width: timelineWidth, lines: byKey };
+  const [openedAtMs] = useState(nowMs);
+  const scrollTime = useMemo(
+    () => ({ milliseconds: Math.max(0, openedAtMs - span.startMs - lookBackMs) }),
+    [openedAtMs, span.startMs],
+  );
+  const said = useMemo(() => saidAbove(data.rows, data.blocks), [data]);
+  const written = useMemo(
+    () => data.blocks.filter((_block, index) => !said.has(index)),
+    [data, said],
+  );
+  const drawing = {
+    data,
+    span,
+    zone: site.zone,
+    width: timelineWidth,
+    lines: byKey,
+    said,
+    written,
+  };
   return (
     <div ref={frame} className={`mp-board mp-board-${span.view}`}>
       <FullCalendar
@@ -158,7 +205,13 @@ export function BoardTimeline(props: {
           }
         }}
         nowIndicator
+        nowIndicatorContent={(arg) =>
+          arg.isAxis ? null : <span className="mp-board-now">{t.board.now}</span>
+        }
+        scrollTime={scrollTime}
+        scrollTimeReset={false}
         expandRows={false}
+        stickyFooterScrollbar={false}
       />
     </div>
   );

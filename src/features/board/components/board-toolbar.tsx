@@ -23,7 +23,7 @@ export function BoardToolbar(props: { span: BoardSpan; state: BoardState; today:
   };
   return (
     <div className="mp-board-tools">
-      <div className="mp-acts">
+      <div className="mp-acts mp-board-steps">
         <Button
           aria-label={words.earlier}
           onClick={() => {
@@ -56,29 +56,6 @@ export function BoardToolbar(props: { span: BoardSpan; state: BoardState; today:
         onChange={state.setView}
         options={boardViews.map((view) => ({ value: view, label: words.views[view] }))}
       />
-      <div className="mp-acts">
-        {boardGroups.map((group) => (
-          <Tick
-            key={group}
-            checked={state.groups.includes(group)}
-            onChange={(event) => {
-              setGroup(group, event.target.checked);
-            }}
-          >
-            {words.groups[group]}
-          </Tick>
-        ))}
-      </div>
-      <label className="mp-board-find">
-        <span className="mp-note">{words.filterText}</span>
-        <TextInput
-          type="search"
-          value={state.text}
-          onChange={(event) => {
-            state.setText(event.target.value);
-          }}
-        />
-      </label>
       <div className="mp-acts mp-board-end">
         <LinkButton kind="link" to={paths.equipment.href(site.code)}>
           {words.reportBreakdown}
@@ -88,6 +65,31 @@ export function BoardToolbar(props: { span: BoardSpan; state: BoardState; today:
             {words.bookByForm}
           </LinkButton>
         ) : null}
+      </div>
+      <div className="mp-board-filters">
+        <div className="mp-acts">
+          {boardGroups.map((group) => (
+            <Tick
+              key={group}
+              checked={state.groups.includes(group)}
+              onChange={(event) => {
+                setGroup(group, event.target.checked);
+              }}
+            >
+              {words.groups[group]}
+            </Tick>
+          ))}
+        </div>
+        <label className="mp-board-find">
+          <span className="mp-note">{words.filterText}</span>
+          <TextInput
+            type="search"
+            value={state.text}
+            onChange={(event) => {
+              state.setText(event.target.value);
+            }}
+          />
+        </label>
       </div>
     </div>
   );
