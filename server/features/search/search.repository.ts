@@ -4,6 +4,7 @@ import { bookingsTable } from '#server/db/tables/booking.table.ts';
 import { calibrationsTable } from '#server/db/tables/calibration.table.ts';
 import { cellTypesTable, cellsTable } from '#server/db/tables/cell.table.ts';
 import { instrumentsTable } from '#server/db/tables/instrument.table.ts';
+import { chamberLoadsTable } from '#server/db/tables/load.table.ts';
 import { projectsTable } from '#server/db/tables/project.table.ts';
 import { requestsTable } from '#server/db/tables/request.table.ts';
 
@@ -73,8 +74,11 @@ export async function findBookingByNumber(reader: Reader, siteId: number, id: nu
       during: bookingsTable.during,
       projectId: bookingsTable.projectId,
       requesterId: requestsTable.requesterId,
+      chamberTag: instrumentsTable.tag,
     })
     .from(bookingsTable)
+    .innerJoin(chamberLoadsTable, eq(chamberLoadsTable.id, bookingsTable.loadId))
+    .innerJoin(instrumentsTable, eq(instrumentsTable.id, chamberLoadsTable.chamberId))
     .innerJoin(requestsTable, eq(requestsTable.id, bookingsTable.requestId))
     .where(and(eq(bookingsTable.siteId, siteId), eq(bookingsTable.id, id)));
   return row;
@@ -95,7 +99,11 @@ export async function findRequestByNumber(reader: Reader, siteId: number, id: nu
   return row;
 }
 
-export async function findCalibrations(reader: Reader, siteId: number, text: string) {
+export async function findCalibrations(
+  reader: Reader,
+  siteId: number,
+  { text, id }: { readonly text: string; readonly id: number | null },
+) {
   const t = calibrationsTable;
   return reader
     .select({
@@ -109,10 +117,7 @@ export async function findCalibrations(reader: Reader, siteId: number, text: str
     .where(
       and(
         eq(instrumentsTable.siteId, siteId),
-        or(
-          /^\d{1,9}$/.test(text) ? eq(t.id, Number(text)) : undefined,
-          ilike(t.certificateNumber, pattern(text)),
-        ),
+        or(id === null ? undefined : eq(t.id, id), ilike(t.certificateNumber, pattern(text))),
       ),
     )
     .orderBy(desc(t.id))
