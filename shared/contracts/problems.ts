@@ -21,7 +21,7 @@ export const problems = {
   'service.unavailable': { status: 503, title: 'A service Millpond needs does not answer' },
   internal: { status: 500, title: 'Something failed on the server' },
   'request.state': { status: 409, title: 'The request is not in a state that allows this' },
-  'request.incomplete': { status: 409, title: 'The request is not complete' },
+  'request.incomplete': { status: 422, title: 'The request is not complete' },
   'offer.expired': { status: 409, title: 'The offer has expired' },
   'offer.policy': { status: 409, title: 'The site lets only schedulers confirm' },
   'booking.clash': { status: 409, title: 'Something is already taken' },

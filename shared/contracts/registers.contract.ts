@@ -171,6 +171,8 @@ export const deviationSchema = z.object({
   code: z.enum(checkCodes),
   state: z.enum(deviationStates),
   reason: z.string(),
+  /** What the person who decided said to it. */
+  decisionReason: z.string().nullable(),
   customerAcceptance: z.string().nullable(),
   askedBy: z.string(),
   askedAt: instant,

@@ -223,6 +223,13 @@ export async function findPersonName(reader: Reader, personId: number) {
   return row ?? null;
 }
 
+/** Those of a request that still hold places. */
+export async function listLiveBookingsOfRequest(reader: Reader, requestId: number) {
+  return bookingRows(reader)
+    .where(and(eq(t.requestId, requestId), inArray(t.state, ['tentative', 'confirmed', 'running'])))
+    .orderBy(asc(t.id));
+}
+
 /** Bookings that have not ended and hold one of the units or stand in one of the chambers. */
 export async function listLiveBookingsOver(
   reader: Reader,

@@ -1,5 +1,6 @@
 import type { SignedIn, SiteScope } from '#server/actor.ts';
 import type { Tx } from '#server/db/client.ts';
+import { lockPlaces } from '#server/db/lock-places.ts';
 import type { Deps } from '#server/deps.ts';
 import { recordAudit } from '#server/features/audit/audit.service.ts';
 import { groupBy } from '#server/features/availability/group-by.ts';
@@ -12,6 +13,7 @@ import type { FacilityIndex } from '#shared/domain/facility/types.ts';
 import { insertCheckResults, updateBooking } from './booking-writes.repository.ts';
 import {
   listBookingPaths,
+  listLiveBookingsOfRequest,
   listLiveBookingsOver,
   listPhasesOfLoads,
 } from './bookings.repository.ts';
@@ -59,6 +61,30 @@ export async function reassessBookings(
     }
   }
   return affected;
+}
+
+/**
+ * The same for the bookings of one request, after something about the request itself changed: when it
+ * is needed, or a rule that was lifted for it. The caller holds the lock of the request's row.
+ */
+export async function reassessRequest(
+  deps: Pick<Deps, 'clock' | 'requestId'>,
+  tx: Tx,
+  site: SiteScope,
+  requestId: number,
+  actor: SignedIn | null,
+): Promise<AffectedBooking[]> {
+  const records = await listLiveBookingsOfRequest(tx, requestId);
+  const paths = await listBookingPaths(
+    tx,
+    records.map(({ booking }) => booking.id),
+  );
+  const places = {
+    chamberIds: records.map(({ chamberId }) => chamberId),
+    unitIds: paths.flatMap((path) => [path.sourceUnitId, path.meterUnitId, path.positionUnitId]),
+  };
+  await lockPlaces(tx, places);
+  return reassessBookings(deps, tx, site, places, actor);
 }
 
 function riskChange(

@@ -32,6 +32,12 @@ export async function listOfRequest(reader: Reader, requestId: number) {
 }
 export type DeviationRecord = Awaited<ReturnType<typeof listOfRequest>>[number];
 
+/** The request a deviation was asked for; null where there is none of that number. */
+export async function findRequestOf(reader: Reader, id: number): Promise<number | null> {
+  const [row] = await reader.select({ requestId: d.requestId }).from(d).where(eq(d.id, id));
+  return row?.requestId ?? null;
+}
+
 /** Locked until the transaction ends, so that of two deciders one waits. */
 export async function lockDeviation(tx: Tx, siteId: number, id: number) {
   await tx.select({ id: d.id }).from(d).where(eq(d.id, id)).for('no key update');

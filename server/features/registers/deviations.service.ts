@@ -1,10 +1,11 @@
 import type { z } from 'zod';
 import type { SignedIn, SiteScope } from '#server/actor.ts';
-import type { Reader } from '#server/db/client.ts';
+import type { Reader, Tx } from '#server/db/client.ts';
 import type { Deps } from '#server/deps.ts';
 import { recordAudit } from '#server/features/audit/audit.service.ts';
 import { maySeeRequest } from '#server/features/availability/slot-request.service.ts';
-import { requireVisible } from '#server/features/requests/requests.service.ts';
+import { reassessRequest } from '#server/features/bookings/reassess-bookings.service.ts';
+import { lockRequest, requireVisible } from '#server/features/requests/requests.service.ts';
 import { notFound, problem, refused } from '#server/problem.ts';
 import type {
   askDeviation as askContract,
@@ -12,8 +13,10 @@ import type {
   DeviationDto,
 } from '#shared/contracts/registers.contract.ts';
 import { checkRules } from '#shared/domain/checks/check-rules.ts';
+import type { CheckCode } from '#shared/domain/checks/types.ts';
 import { may } from '#shared/domain/policies/may.ts';
 import {
+  findRequestOf,
   insertDeviation,
   listAsked,
   listOfRequest,
@@ -50,6 +53,7 @@ export async function askDeviation(
   wish: z.output<typeof askContract.body>,
 ): Promise<DeviationDto> {
   return deps.transact(async (tx) => {
+    await lockRequest(tx, site.id, id);
     const request = await requireVisible(tx, actor, site, id);
     if (!may(actor, 'request.edit', site.code, { ownerId: request.requesterId })) {
       throw refused('Only the person who asked for the slot can ask for a deviation. Ask them.');
@@ -65,6 +69,7 @@ export async function askDeviation(
         detail: `Nobody may lift "${rule.title}": it protects people, cells or the meaning of the result. Change the request or choose another slot.`,
       });
     }
+    await requireNew(tx, id, wish.code, rule.title);
     const now = deps.clock.now();
     const made = await insertDeviation(tx, {
       requestId: id,
@@ -86,6 +91,18 @@ export async function askDeviation(
   });
 }
 
+/** A rule that waits for a decision is not asked for twice. */
+async function requireNew(tx: Tx, requestId: number, code: CheckCode, title: string) {
+  const present = (await listOfRequest(tx, requestId)).find(
+    ({ deviation }) => deviation.checkCode === code && deviation.state === 'asked',
+  );
+  if (present !== undefined) {
+    throw problem('request.state', {
+      detail: `Deviation ${present.deviation.id} for "${title}" waits for a decision already. Ask a metrologist or manager to decide it.`,
+    });
+  }
+}
+
 /** Somebody other than the asker and the requester grants or refuses. */
 export async function decideDeviation(
   deps: Changing,
@@ -93,6 +110,7 @@ export async function decideDeviation(
   wish: z.output<typeof decideContract.body>,
 ): Promise<DeviationDto> {
   return deps.transact(async (tx) => {
+    await lockRequestOf(tx, site, id);
     const row = await lockDeviation(tx, site.id, id);
     if (row === undefined || !maySeeRequest(actor, site.code, row)) {
       throw notFound('such deviation');
@@ -123,9 +141,22 @@ export async function decideDeviation(
       before: { state: 'asked' },
       after: { state, ...wish },
     });
-    const rows = await listOfRequest(tx, row.deviation.requestId ?? 0);
+    const requestId = row.deviation.requestId ?? 0;
+    if (wish.grant) {
+      // What was at risk because of the rule may stand from now on.
+      await reassessRequest(deps, tx, site, requestId, actor);
+    }
+    const rows = await listOfRequest(tx, requestId);
     return presentDeviation(requireRow(rows.find((each) => each.deviation.id === id)), now);
   });
+}
+
+/** The request comes first in the order of locks that everybody keeps. */
+async function lockRequestOf(tx: Tx, site: SiteScope, deviationId: number): Promise<void> {
+  const requestId = await findRequestOf(tx, deviationId);
+  if (requestId !== null) {
+    await lockRequest(tx, site.id, requestId);
+  }
 }
 
 function requireOther(actor: SignedIn, site: SiteScope, row: DeviationRecord): void {
@@ -177,6 +208,7 @@ function presentDeviation(
     code: deviation.checkCode,
     state: deviation.state === 'granted' && isOver ? 'expired' : deviation.state,
     reason: deviation.reason,
+    decisionReason: deviation.decisionReason,
     customerAcceptance: deviation.customerAcceptance,
     askedBy,
     askedAt: deviation.requestedAt.toISOString(),

@@ -40,7 +40,7 @@ export async function getEstimateBasis(deps: Pick<Deps, 'db'>, site: SiteScope):
       rampKPerMin: chamber?.rampKPerMin ?? 1,
     },
     holderFactor: 1,
-    // No runs are recorded through Millpond yet: the estimate says that its margin is the prior's.
+    // The search learns from no run yet, and an estimate before it must not promise other lengths.
     learnedRatios: null,
     staffedHours: describeWeek(calendar),
     zone: site.zone,

@@ -1,4 +1,4 @@
-import { and, asc, eq, gt, ilike, inArray, notExists, or, sql } from 'drizzle-orm';
+import { and, asc, eq, exists, gt, ilike, inArray, ne, notExists, or, sql } from 'drizzle-orm';
 import type { Reader } from '#server/db/client.ts';
 import { bookingsTable, bookingCellsTable } from '#server/db/tables/booking.table.ts';
 import { cellTypesTable, cellsTable } from '#server/db/tables/cell.table.ts';
@@ -6,7 +6,11 @@ import { chamberSpecsTable } from '#server/db/tables/chamber.table.ts';
 import { meterRangesTable, sourceSpecsTable } from '#server/db/tables/channel.table.ts';
 import { instrumentsTable } from '#server/db/tables/instrument.table.ts';
 import { projectsTable } from '#server/db/tables/project.table.ts';
-import { requestLotCellsTable } from '#server/db/tables/request.table.ts';
+import {
+  requestLotCellsTable,
+  requestLotsTable,
+  requestsTable,
+} from '#server/db/tables/request.table.ts';
 
 export async function listCellTypeRows(reader: Reader) {
   return reader.select().from(cellTypesTable).orderBy(asc(cellTypesTable.name));
@@ -36,7 +40,9 @@ export async function listCellRows(
   const asked = reader
     .select({ id: requestLotCellsTable.cellId })
     .from(requestLotCellsTable)
-    .where(eq(requestLotCellsTable.cellId, c.id));
+    .innerJoin(requestLotsTable, eq(requestLotsTable.id, requestLotCellsTable.lotId))
+    .innerJoin(requestsTable, eq(requestsTable.id, requestLotsTable.requestId))
+    .where(and(eq(requestLotCellsTable.cellId, c.id), ne(requestsTable.state, 'withdrawn')));
   return reader
     .select({ cell: c, cellTypeName: cellTypesTable.name, projectName: projectsTable.name })
     .from(c)
@@ -45,7 +51,7 @@ export async function listCellRows(
     .where(
       and(
         eq(c.siteId, filter.siteId),
-        or(sql`${c.status} <> 'announced'`, sql`exists ${asked}`),
+        or(ne(c.status, 'announced'), exists(asked)),
         ...filterConditions(reader, filter),
         after === undefined ? undefined : sql`(${serial}, ${c.id}) > (${after[0]}, ${after[1]})`,
       ),

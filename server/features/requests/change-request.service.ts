@@ -2,11 +2,12 @@ import type { SignedIn, SiteScope } from '#server/actor.ts';
 import type { Tx } from '#server/db/client.ts';
 import type { Deps } from '#server/deps.ts';
 import { recordAudit } from '#server/features/audit/audit.service.ts';
+import { reassessRequest } from '#server/features/bookings/reassess-bookings.service.ts';
 import { notFound, problem, refused, staleVersion } from '#server/problem.ts';
 import type { RequestDto, RequestFields } from '#shared/contracts/requests.contract.ts';
 import type { Action } from '#shared/domain/policies/actions.ts';
 import { may } from '#shared/domain/policies/may.ts';
-import { requireSense, toColumns, toLots } from './request-fields.service.ts';
+import { requireSense, requireTimes, toColumns, toLots } from './request-fields.service.ts';
 import { describeRequest, lockRequest, requireVisible, writeRequest } from './requests.service.ts';
 import {
   insertRequest,
@@ -44,7 +45,7 @@ export async function createRequest(
       createdAt: at,
       updatedAt: at,
     });
-    await writeLots(tx, requestId, toLots(fields));
+    await writeLots(tx, { id: requestId, projectId: fields.projectId }, toLots(fields));
     const made = await describeRequest(tx, site, requestId);
     await audit(deps, tx, { actor, site, requestId }, 'request.create', null, made);
     return made;
@@ -59,17 +60,20 @@ export async function updateRequest(
 ): Promise<RequestDto> {
   const { version, ...fields } = wish;
   return change(deps, who, { action: 'request.edit', version }, async (tx, request, before) => {
-    await requireSense(tx, who.actor, who.site, fields);
     const at = deps.clock.now();
     if (request.state === 'partly-booked' || request.state === 'booked') {
-      await requireOnlyFree(tx, who.site, before, fields);
+      requireOnlyFree(before, fields);
+      requireTimes(fields);
       const { note, neededByAt } = toColumns(fields);
       await writeRequest(tx, request, { note, neededByAt }, at);
+      // A booking that ends too late for the new day is at risk from now on, and the other way round.
+      await reassessRequest(deps, tx, who.site, request.id, who.actor);
       return;
     }
     requireState(request, ['draft', 'submitted']);
+    await requireSense(tx, who.actor, who.site, fields);
     await requireKeptLots(tx, request, fields);
-    await writeLots(tx, request.id, toLots(fields));
+    await writeLots(tx, { id: request.id, projectId: fields.projectId }, toLots(fields));
     if (request.state === 'submitted') {
       await keepComplete(tx, who.site, request, fields, at);
     }
@@ -174,33 +178,38 @@ async function change(
 function requireState(request: RequestRow, states: readonly RequestRow['state'][]): void {
   if (!states.includes(request.state)) {
     throw problem('request.state', {
-      detail: `Request ${request.id} is ${request.state.replace('-', ' ')}, so this cannot be done to it any more. Reload the page to see where it stands.`,
+      detail: `Request ${request.id} is ${standing[request.state]}`,
     });
   }
 }
 
+/** Where a request stands, and what to do instead of what cannot be done to it. */
+const standing: Readonly<Record<RequestRow['state'], string>> = {
+  draft: 'still a draft. Let the person who asked submit it first.',
+  submitted: 'with the schedulers already. Reload the page to see where it stands.',
+  'partly-booked': 'partly booked. Move or cancel its bookings instead.',
+  booked: 'booked. Move or cancel its bookings instead.',
+  done: 'done. Keep a new request for what is still needed.',
+  withdrawn: 'withdrawn. Keep a new request instead.',
+};
+
 /** What a booking rests on is changed by moving or cancelling the booking. */
-async function requireOnlyFree(
-  tx: Tx,
-  site: SiteScope,
-  before: RequestDto,
-  fields: RequestFields,
-): Promise<void> {
-  const asked = JSON.stringify([
-    { ...toColumns(fields), note: null, neededByAt: null },
-    toLots(fields),
-  ]);
-  const kept = fieldsOf(await describeRequest(tx, site, before.id));
-  const present = JSON.stringify([
-    { ...toColumns(kept), note: null, neededByAt: null },
-    toLots(kept),
-  ]);
-  if (asked !== present) {
+function requireOnlyFree(before: RequestDto, fields: RequestFields): void {
+  if (boundOf(fields) !== boundOf(fieldsOf(before))) {
     const bookings = before.lots.map(({ bookingId }) => bookingId).filter((id) => id !== null);
     throw problem('request.state', {
       detail: `Request ${before.id} is booked: only its note and needed-by can change. For the rest move or cancel booking ${bookings.join(', ')}.`,
     });
   }
+}
+
+/** All but what stays free, in a form that can be compared. */
+function boundOf(fields: RequestFields): string {
+  const lots = toLots(fields).map(({ cellIds, values }) => ({
+    values,
+    cellIds: cellIds.toSorted((first, second) => first - second),
+  }));
+  return JSON.stringify([{ ...toColumns(fields), note: null, neededByAt: null }, lots]);
 }
 
 function fieldsOf(request: RequestDto): RequestFields {

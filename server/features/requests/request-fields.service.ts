@@ -52,11 +52,19 @@ export async function requireSense(
   site: SiteScope,
   fields: RequestFields,
 ): Promise<void> {
-  const errors = [
+  refuse([
     ...timeFaults(fields),
     ...(await projectFaults(reader, actor, site, fields)),
     ...(await lotFaults(reader, site, fields)),
-  ];
+  ]);
+}
+
+/** The part of it that needs no record. */
+export function requireTimes(fields: RequestFields): void {
+  refuse(timeFaults(fields));
+}
+
+function refuse(errors: readonly InputFault[]): void {
   if (errors.length > 0) {
     throw problem('input.invalid', {
       detail:

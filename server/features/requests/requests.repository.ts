@@ -71,6 +71,8 @@ export async function listCellsOfLots(reader: Reader, lotIds: readonly number[])
       id: cellsTable.id,
       serial: cellsTable.serial,
       status: cellsTable.status,
+      cellTypeId: cellsTable.cellTypeId,
+      projectId: cellsTable.projectId,
     })
     .from(requestLotCellsTable)
     .innerJoin(cellsTable, eq(cellsTable.id, requestLotCellsTable.cellId))
@@ -251,9 +253,10 @@ type LotValues = Omit<typeof requestLotsTable.$inferInsert, 'id' | 'requestId' |
 /** Writes the lots in their order; those that are there keep their numbers. */
 export async function writeLots(
   tx: Tx,
-  requestId: number,
+  request: { readonly id: number; readonly projectId: number | null },
   lots: readonly { readonly values: LotValues; readonly cellIds: readonly number[] }[],
 ): Promise<void> {
+  const { id: requestId, projectId } = request;
   const present = await listLots(tx, requestId);
   for (const [place, { values, cellIds }] of lots.entries()) {
     const seq = place + 1;
@@ -268,7 +271,11 @@ export async function writeLots(
     if (row === undefined) {
       throw new Error('No lot was written.');
     }
-    await writeLotCells(tx, row.id, cellIds, values.cellCount ?? 0);
+    await writeLotCells(tx, row.id, cellIds, {
+      cellTypeId: values.cellTypeId ?? null,
+      projectId,
+      cellCount: values.cellCount ?? 0,
+    });
   }
   const surplus = present.filter(({ lot }) => lot.seq > lots.length).map(({ lot }) => lot.id);
   if (surplus.length > 0) {
@@ -276,16 +283,30 @@ export async function writeLots(
   }
 }
 
-/** Named cells replace what was there; without names, announced ones stay up to the number asked. */
+/**
+ * Named cells replace what was there; without names, announced ones stay up to the number asked as
+ * long as they are of the type and project that are asked for now.
+ */
 async function writeLotCells(
   tx: Tx,
   lotId: number,
   cellIds: readonly number[],
-  cellCount: number,
+  asked: {
+    readonly cellTypeId: number | null;
+    readonly projectId: number | null;
+    readonly cellCount: number;
+  },
 ): Promise<void> {
   const present = await listCellsOfLots(tx, [lotId]);
-  const announced = present.filter(({ status }) => status === 'announced').map(({ id }) => id);
-  const wanted = cellIds.length > 0 ? cellIds : announced.slice(0, cellCount);
+  const announced = present
+    .filter(
+      (cell) =>
+        cell.status === 'announced' &&
+        cell.cellTypeId === asked.cellTypeId &&
+        cell.projectId === asked.projectId,
+    )
+    .map(({ id }) => id);
+  const wanted = cellIds.length > 0 ? cellIds : announced.slice(0, asked.cellCount);
   const gone = present.map(({ id }) => id).filter((id) => !wanted.includes(id));
   const added = wanted.filter((id) => !present.some((cell) => cell.id === id));
   if (gone.length > 0) {
