@@ -4,6 +4,12 @@ import type { RequestDto, RequestFields } from '#shared/contracts/requests.contr
 import { parseFigure } from '#src/lib/format-number.ts';
 import { fromSiteInput, toSiteInput } from '#src/lib/site-time.ts';
 import { t } from '#src/texts/t.ts';
+import { looseRatio, looseTolerance } from './loose-fields.view.ts';
+
+const usualTolerance = { kind: 'relative', fraction: 0.1 } as const;
+const usualRatio = 3;
+/** Enough to say what was typed, few enough to leave the dust of binary fractions behind. */
+const digitsKept = 12;
 
 /** As typed: figures and times stay text until the form is sent, so that nothing typed is lost. */
 export const lotDraftSchema = z.object({
@@ -12,7 +18,7 @@ export const lotDraftSchema = z.object({
   cellTypeId: z.string(),
   by: z.enum(['number', 'serial']),
   cellCount: z.string(),
-  cellIds: z.array(z.number()),
+  cells: z.array(z.object({ id: z.number(), serial: z.string().nullable() })),
   stateOfChargePct: z.string(),
   restedSince: z.string(),
   storageTemperatureC: z.string(),
@@ -44,7 +50,7 @@ export function emptyLot(): LotDraft {
     cellTypeId: '',
     by: 'number',
     cellCount: '',
-    cellIds: [],
+    cells: [],
     stateOfChargePct: '',
     restedSince: '',
     storageTemperatureC: '',
@@ -84,7 +90,7 @@ export function draftOf(request: RequestDto, zone: string): RequestDraft {
       cellTypeId: text(lot.cellTypeId),
       by: lot.cellIds.length > 0 ? 'serial' : 'number',
       cellCount: text(lot.cellCount),
-      cellIds: lot.cellIds,
+      cells: lot.cells.filter(({ id }) => lot.cellIds.includes(id)),
       stateOfChargePct: text(lot.stateOfChargePct),
       restedSince: lot.restedSinceAt === null ? '' : toSiteInput(lot.restedSinceAt, zone),
       storageTemperatureC: text(lot.storageTemperatureC),
@@ -106,13 +112,9 @@ export function draftOf(request: RequestDto, zone: string): RequestDraft {
 
 export type FieldErrors = ReadonlyMap<string, string>;
 
-/** Reads the draft with the contract's own schema; errors by JSON pointer, as the server names them. */
-export function readDraft(
-  draft: RequestDraft,
-  zone: string,
-): { fields: RequestFields | null; errors: FieldErrors } {
-  const errors = new Map<string, string>();
-  const figure = (typed: string, pointer: string, factor = 1): number | null => {
+/** Reads single entries; what cannot be read is noted at its JSON pointer. */
+function entryReader(zone: string, errors: Map<string, string>) {
+  const figure = (typed: string, pointer: string, perUnit = 1): number | null => {
     if (typed.trim() === '') {
       return null;
     }
@@ -121,42 +123,81 @@ export function readDraft(
       errors.set(pointer, t.ui.notANumber);
       return null;
     }
-    return value * factor;
+    return perUnit === 1 ? value : Number((value / perUnit).toPrecision(digitsKept));
   };
-  const instant = (typed: string, pointer: string): string | null => {
-    const reading = fromSiteInput(typed, zone);
-    if (reading.kind === 'gap') {
-      errors.set(pointer, t.ui.timeGap(zone));
-    } else if (reading.kind === 'invalid') {
-      errors.set(pointer, t.ui.timeInvalid);
-    }
-    return reading.kind === 'instant' ? reading.at : null;
+  return {
+    figure,
+    /** A figure that even a draft must have. */
+    needed: (typed: string, pointer: string, perUnit = 1): number => {
+      const value = figure(typed, pointer, perUnit);
+      if (value === null) {
+        errors.set(pointer, t.ui.notANumber);
+      }
+      return value ?? Number.NaN;
+    },
+    instant: (typed: string, pointer: string): string | null => {
+      const reading = fromSiteInput(typed, zone);
+      if (reading.kind === 'gap') {
+        errors.set(pointer, t.ui.timeGap(zone));
+      } else if (reading.kind === 'invalid') {
+        errors.set(pointer, t.ui.timeInvalid);
+      }
+      return reading.kind === 'instant' ? reading.at : null;
+    },
   };
+}
+type EntryReader = ReturnType<typeof entryReader>;
+
+/** Only the aim that is shown is held against its limits; the hidden one keeps what it can. */
+function readAim(
+  draft: RequestDraft,
+  read: EntryReader,
+): Pick<RequestFields, 'tolerance' | 'badToGoodRatio'> {
+  if (draft.kind === 'screening') {
+    return {
+      tolerance: looseTolerance(draft) ?? usualTolerance,
+      badToGoodRatio: read.needed(draft.badToGoodRatio, '#/badToGoodRatio'),
+    };
+  }
+  return {
+    tolerance:
+      draft.toleranceKind === 'relative'
+        ? { kind: 'relative', fraction: read.needed(draft.tolerancePct, '#/tolerance', 100) }
+        : { kind: 'absolute', currentA: read.needed(draft.toleranceUa, '#/tolerance', 1e6) },
+    badToGoodRatio: looseRatio(draft) ?? usualRatio,
+  };
+}
+
+function readLot(lot: LotDraft, at: string, read: EntryReader): RequestFields['lots'][number] {
+  const isBySerial = lot.by === 'serial' && lot.cells.length > 0;
+  return {
+    cellTypeId: lot.cellTypeId === '' ? null : Number(lot.cellTypeId),
+    cellIds: isBySerial ? lot.cells.map(({ id }) => id) : [],
+    cellCount: isBySerial ? lot.cells.length : read.figure(lot.cellCount, `${at}/cellCount`),
+    stateOfChargePct: read.figure(lot.stateOfChargePct, `${at}/stateOfChargePct`),
+    restedSinceAt: read.instant(lot.restedSince, `${at}/restedSinceAt`),
+    storageTemperatureC: read.figure(lot.storageTemperatureC, `${at}/storageTemperatureC`),
+    isDamaged: lot.isDamaged,
+  };
+}
+
+/** Reads the draft with the contract's own schema; errors by JSON pointer, as the server names them. */
+export function readDraft(
+  draft: RequestDraft,
+  zone: string,
+): { fields: RequestFields | null; errors: FieldErrors } {
+  const errors = new Map<string, string>();
+  const read = entryReader(zone, errors);
   const fields: RequestFields = {
     projectId: draft.projectId === '' ? null : Number(draft.projectId),
     kind: draft.kind,
     grade: draft.grade,
-    lots: draft.lots.map((lot, place) => ({
-      cellTypeId: lot.cellTypeId === '' ? null : Number(lot.cellTypeId),
-      cellIds: lot.by === 'serial' ? lot.cellIds : [],
-      cellCount:
-        lot.by === 'serial' && lot.cellIds.length > 0
-          ? lot.cellIds.length
-          : figure(lot.cellCount, `#/lots/${place}/cellCount`),
-      stateOfChargePct: figure(lot.stateOfChargePct, `#/lots/${place}/stateOfChargePct`),
-      restedSinceAt: instant(lot.restedSince, `#/lots/${place}/restedSinceAt`),
-      storageTemperatureC: figure(lot.storageTemperatureC, `#/lots/${place}/storageTemperatureC`),
-      isDamaged: lot.isDamaged,
-    })),
-    setTemperatureC: figure(draft.setTemperatureC, '#/setTemperatureC'),
-    setToleranceK: figure(draft.setToleranceK, '#/setToleranceK') ?? 0,
-    tolerance:
-      draft.toleranceKind === 'relative'
-        ? { kind: 'relative', fraction: figure(draft.tolerancePct, '#/tolerance', 0.01) ?? 0.1 }
-        : { kind: 'absolute', currentA: figure(draft.toleranceUa, '#/tolerance', 1e-6) ?? 0 },
-    badToGoodRatio: figure(draft.badToGoodRatio, '#/badToGoodRatio') ?? 3,
-    earliestStartAt: instant(draft.earliestStart, '#/earliestStartAt'),
-    neededByAt: instant(draft.neededBy, '#/neededByAt'),
+    lots: draft.lots.map((lot, place) => readLot(lot, `#/lots/${place}`, read)),
+    setTemperatureC: read.figure(draft.setTemperatureC, '#/setTemperatureC'),
+    setToleranceK: read.needed(draft.setToleranceK, '#/setToleranceK'),
+    ...readAim(draft, read),
+    earliestStartAt: read.instant(draft.earliestStart, '#/earliestStartAt'),
+    neededByAt: read.instant(draft.neededBy, '#/neededByAt'),
     maySplit: draft.maySplit,
     note: draft.note,
   };
@@ -174,4 +215,44 @@ export function readDraft(
 function pointerOf(path: readonly PropertyKey[]): string {
   const pointer = `#/${path.map(String).join('/')}`;
   return pointer.startsWith('#/tolerance') ? '#/tolerance' : pointer;
+}
+
+/**
+ * Of a booked request only the note and the day it is needed by can change: the rest goes back as it
+ * was sent, to the last digit, so that nothing looks changed that nobody touched.
+ */
+export function readFreeEntries(
+  draft: RequestDraft,
+  request: RequestDto,
+  zone: string,
+): ReturnType<typeof readDraft> {
+  const errors = new Map<string, string>();
+  const neededByAt = entryReader(zone, errors).instant(draft.neededBy, '#/neededByAt');
+  const fields = { ...fieldsOf(request), neededByAt, note: draft.note };
+  return { fields: errors.size === 0 ? fields : null, errors };
+}
+
+function fieldsOf(request: RequestDto): RequestFields {
+  return {
+    projectId: request.project?.id ?? null,
+    kind: request.kind,
+    grade: request.grade,
+    lots: request.lots.map((lot) => ({
+      cellTypeId: lot.cellTypeId,
+      cellIds: lot.cellIds,
+      cellCount: lot.cellCount,
+      stateOfChargePct: lot.stateOfChargePct,
+      restedSinceAt: lot.restedSinceAt,
+      storageTemperatureC: lot.storageTemperatureC,
+      isDamaged: lot.isDamaged,
+    })),
+    setTemperatureC: request.setTemperatureC,
+    setToleranceK: request.setToleranceK,
+    tolerance: request.tolerance,
+    badToGoodRatio: request.badToGoodRatio,
+    earliestStartAt: request.earliestStartAt,
+    neededByAt: request.neededByAt,
+    maySplit: request.maySplit,
+    note: request.note,
+  };
 }

@@ -1,48 +1,54 @@
-import { useEffect, useState } from 'react';
-import { emptyDraft, requestDraftSchema, type RequestDraft } from './request-draft.view.ts';
+import { useEffect, useRef, useState } from 'react';
+import { forgetKept, keep, readKept, type Kept } from './kept-draft.ts';
+import type { RequestDraft } from './request-draft.view.ts';
 
-function readKept(key: string): RequestDraft | null {
-  const kept = sessionStorage.getItem(key);
-  if (kept === null) {
-    return null;
-  }
-  try {
-    const parsed = requestDraftSchema.safeParse(JSON.parse(kept));
-    return parsed.success ? parsed.data : null;
-  } catch (error) {
-    if (error instanceof SyntaxError) {
-      return null;
-    }
-    throw error;
-  }
-}
-
-/** What is typed survives a reload, a wrong link and an ended session, until it is saved. */
-export function useRequestDraft(storageKey: string, initial: RequestDraft | null) {
+/**
+ * The form as typed. It survives a reload, a wrong link and an ended session until it is saved, and it
+ * remembers on which version of the request it was begun: a newer one never replaces what was typed.
+ */
+export function useRequestDraft(storageKey: string, saved: Kept) {
   const [kept] = useState(() => readKept(storageKey));
-  const [draft, setDraft] = useState<RequestDraft>(() => kept ?? initial ?? emptyDraft());
+  const [form, setForm] = useState<Kept>(() => kept ?? saved);
   const [isTouched, setIsTouched] = useState(kept !== null);
+  const [wasRestored, setWasRestored] = useState(kept !== null);
+  // Leaving follows right on saving, before the page is drawn again.
+  const isDone = useRef(false);
+  // Nothing typed yet: whatever was saved meanwhile is simply shown.
+  const shown = isTouched ? form : saved;
   useEffect(() => {
-    if (isTouched) {
-      sessionStorage.setItem(storageKey, JSON.stringify(draft));
+    if (isTouched && !isDone.current) {
+      keep(storageKey, form);
     }
-  }, [draft, isTouched, storageKey]);
+  }, [form, isTouched, storageKey]);
   return {
-    draft,
+    draft: shown.draft,
+    version: shown.version,
     isTouched,
-    wasRestored: kept !== null,
+    wasRestored,
+    /** Somebody saved another version while this was being typed. */
+    isBehind: shown.version !== saved.version,
+    mayLeave: () => !isTouched || isDone.current,
     set: (change: Partial<RequestDraft>) => {
       setIsTouched(true);
-      setDraft((current) => ({ ...current, ...change }));
+      setForm((current) => {
+        const { version, draft } = isTouched ? current : saved;
+        return { version, draft: { ...draft, ...change } };
+      });
     },
-    forget: () => {
-      sessionStorage.removeItem(storageKey);
-      setIsTouched(false);
+    /** It is saved: nothing is kept, and leaving asks nothing. */
+    finish: () => {
+      isDone.current = true;
+      forgetKept(storageKey);
     },
     startAfresh: () => {
-      sessionStorage.removeItem(storageKey);
+      forgetKept(storageKey);
       setIsTouched(false);
-      setDraft(initial ?? emptyDraft());
+      setWasRestored(false);
+      setForm(saved);
+    },
+    /** Holds on to what was typed and puts it over what somebody else saved. */
+    keepMine: () => {
+      setForm((current) => ({ ...current, version: saved.version }));
     },
   };
 }

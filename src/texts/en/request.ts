@@ -2,6 +2,10 @@ export const request = {
   newTitle: 'New request',
   newIntro: 'Kept as a draft until you submit it. The estimate follows what you enter.',
   editTitle: (id: number) => `Change request ${id}`,
+  editPlain: 'What was asked stays as it is until you save.',
+  editBooked:
+    'It is booked: only the note and the day it is needed by can change. For the rest move or cancel the booking.',
+  mayNotAsk: 'Engineers and schedulers ask for slots. Your roles at this site do not include that.',
   editIntro:
     'A wish for a slot that was noted before is taken out, because it was for the old form.',
   restored: 'What you had typed before and not saved is back.',
@@ -24,6 +28,10 @@ export const request = {
   findCells: 'Find a serial',
   cellsHelp: 'Received, undamaged and not booked.',
   noCells: 'No free cell of this type fits.',
+  typeFirst: 'Choose a cell type first.',
+  cellNumber: (id: number) => `cell ${id}`,
+  takeOut: (name: string) => `Take out ${name}`,
+  out: 'take out',
   moreCells: 'Narrow the search to see others.',
   chosen: (count: number) => (count === 1 ? '1 cell chosen' : `${count} cells chosen`),
   stateOfCharge: 'State of charge',
@@ -71,9 +79,21 @@ export const request = {
   submit: 'Submit',
   saveChanges: 'Save the changes',
   leave: 'Leave without saving',
+  leaveTitle: 'Leave without saving',
+  stay: 'Stay here',
+  behindTitle: 'Changed meanwhile.',
+  behind:
+    'Somebody saved another version of this request since you began. What you typed is still here: put it over the saved one, or take the saved one and lose yours.',
+  keepMine: 'Keep what I typed',
+  takeSaved: 'Take the saved version',
+  behindWhy: 'somebody changed it meanwhile, decide above',
+  noProject: 'You belong to no open project of this site. Ask its administrator.',
   leaveAsk:
     'What you typed is not saved. It stays in this window until you come back or start afresh.',
-  fix: 'Some entries cannot be accepted. They are marked above.',
+  fix: (count: number) =>
+    count === 1
+      ? '1 entry cannot be accepted. It is marked above.'
+      : `${count} entries cannot be accepted. They are marked above.`,
   estimate: 'Estimate',
   estimateOfLot: (place: number) => `Lot ${place}`,
   estimateAsks: (what: string) => `Give ${what} and the estimate appears here.`,
@@ -81,19 +101,64 @@ export const request = {
     cellType: 'a cell type',
     cellCount: 'the number of cells',
     temperature: 'a set temperature',
+    tolerance: 'a tolerance within its limits',
+    ratio: 'a ratio above 1',
   },
+  overWiring: (label: string) => `Over the ${label}. Each slot is counted again over its own path.`,
+  estimateLabel: (place: number) => `Estimate of lot ${place}`,
+  slotSummary: (likely: string, safe: string) => `The slot takes ${likely} likely, ${safe} safely.`,
   loadingBasis: 'the site’s figures',
   likely: 'Likely',
   safe: (pct: number) => `Safe (${pct} in 100)`,
   safeNote: 'The slot is booked for the safe length. Waiting for staff may be added.',
-  phaseColumns: { phase: 'Phase', likely: 'Likely', safe: 'Safe', attended: 'Staff' },
+  phaseColumns: {
+    phase: 'Phase',
+    likely: 'Likely',
+    safe: 'Safe',
+    why: 'Why',
+    origin: 'Where it comes from',
+  },
+  reasons: {
+    handling: 'By the number of cells.',
+    perCell: (fixed: number, perCell: number, cells: number) =>
+      cells === 1
+        ? `${fixed} min and ${perCell} min for the cell.`
+        : `${fixed} min and ${perCell} min for each of ${cells} cells.`,
+    rampTo: (to: string) => `To ${to}.`,
+    ramp: (from: string, to: string, rate: string) => `${from} to ${to} at ${rate} K/min.`,
+    soak: (constant: string) =>
+      `Until the cells are within 0.1 K; thermal time constant ${constant}.`,
+    match: 'The source is set to the cell’s own voltage.',
+    hold: (constant: string, capacitance: string, resistance: string) =>
+      `Time constant ${constant}: ${capacitance} × ${resistance}.`,
+    holdThermal: (constant: string) =>
+      `What the soak leaves fades with the thermal time constant ${constant}.`,
+    measure: (allowance: string) => `Enough for ± ${allowance}; the shortest window of the site.`,
+    measureNoise: (allowance: string) => `The meter’s noise averaged down for ± ${allowance}.`,
+    back: 'Back to the idle temperature before the door opens.',
+  },
+  shorter: {
+    title: 'What would shorten it',
+    change: 'Change',
+    length: 'Safe length',
+    tolerance: (wider: string, present: string) => `± ${wider} instead of ± ${present}`,
+    screening: (ratio: number) => `Screening only: bad cells with ${ratio} times the current`,
+    ratio: (wider: string, present: string) =>
+      `Bad cells with ${wider} times the current instead of ${present}`,
+    leads: (shorter: string, present: string) => `Leads of ${shorter} instead of ${present}`,
+  },
+  attendedIn: (hours: string) => `Attended: ${hours}.`,
   same: 'same',
-  attended: 'attended',
+  attended: 'Attended.',
   slot: 'Slot',
   settling: 'Settling',
   settlingNote: 'What the meter will read after the match, by the cell’s figures.',
   settledBand: (low: string, high: string) => `settled: ${low} to ${high}`,
-  starts: { high: 'source starts high', low: 'source starts low' },
+  starts: {
+    high: 'source starts high',
+    low: 'source starts low',
+    both: 'source starts high or low',
+  },
   settlingSummary: (likely: string, safe: string) =>
     `The current comes inside the tolerance after ${likely}, safely after ${safe}.`,
   figures: 'Every figure with its formula and source',
@@ -112,7 +177,8 @@ export const request = {
     assumption: 'assumption',
   },
   rangeTitle: 'No single figure yet.',
-  range: (shortest: string, longest: string) => `Between ${shortest} and ${longest}.`,
+  range: (shortest: string, atShort: string, longest: string, atLong: string) =>
+    `Between ${shortest} (charge ${atShort}) and ${longest} (charge ${atLong}).`,
   impossible: 'Waiting cannot reach this.',
   tooLong: 'Longer than the longest hold offered.',
   unknown: 'Nothing can be said yet.',

@@ -1,5 +1,6 @@
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
+import { Button } from '#src/components/ui/button.tsx';
 import { ErrorState, Loading } from '#src/components/ui/feedback.tsx';
 import { TextInput } from '#src/components/ui/input.tsx';
 import { Tick } from '#src/components/ui/tick.tsx';
@@ -8,16 +9,50 @@ import { useSite } from '#src/hooks/use-site.ts';
 import { tableError } from '#src/lib/table-error.ts';
 import { t } from '#src/texts/t.ts';
 import { freeCellsQuery } from '../api/request-queries.ts';
+import type { LotDraft } from '../request-draft.view.ts';
 
 const words = t.request;
+type Chosen = LotDraft['cells'];
 
-/** Registered cells to tick, by serial. */
-export function CellPicker(props: {
+type PickerProps = {
   cellTypeId: number | null;
   projectId: number | null;
-  chosen: readonly number[];
-  onChange: (cellIds: number[]) => void;
-}) {
+  chosen: Chosen;
+  onChange: (cells: Chosen) => void;
+};
+
+/** Chosen cells stay in sight whatever the search shows, each with its way out. */
+function ChosenCells(props: Pick<PickerProps, 'chosen' | 'onChange'>) {
+  return (
+    <>
+      <p className="mp-help" role="status">
+        {words.chosen(props.chosen.length)}
+      </p>
+      <ul className="mb-2 flex flex-wrap gap-x-3 gap-y-1">
+        {props.chosen.map((cell) => {
+          const name = cell.serial ?? words.cellNumber(cell.id);
+          return (
+            <li key={cell.id} className="font-mono text-[12px]">
+              {name}{' '}
+              <Button
+                kind="link"
+                aria-label={words.takeOut(name)}
+                onClick={() => {
+                  props.onChange(props.chosen.filter(({ id }) => id !== cell.id));
+                }}
+              >
+                {words.out}
+              </Button>
+            </li>
+          );
+        })}
+      </ul>
+    </>
+  );
+}
+
+/** Registered cells to tick, by serial. */
+export function CellPicker(props: PickerProps) {
   const site = useSite();
   const [text, setText] = useState('');
   const wish = {
@@ -27,8 +62,13 @@ export function CellPicker(props: {
   };
   const cells = useQuery(freeCellsQuery(site.code, wish));
   const failure = tableError(cells);
+  if (props.cellTypeId === null) {
+    return <p className="mp-help">{words.typeFirst}</p>;
+  }
+  const chosenIds = new Set(props.chosen.map(({ id }) => id));
   return (
-    <div className="mt-2">
+    <div>
+      <ChosenCells chosen={props.chosen} onChange={props.onChange} />
       <TextInput
         type="search"
         aria-label={words.findCells}
@@ -37,30 +77,26 @@ export function CellPicker(props: {
           setText(event.target.value);
         }}
       />
-      <p className="mp-help" role="status">
-        {words.chosen(props.chosen.length)}
-      </p>
       {failure === undefined ? null : <ErrorState {...failure} />}
       {cells.isLoading ? <Loading /> : null}
-      {cells.data?.items.length === 0 ? <p className="mp-note">{words.noCells}</p> : null}
-      <div className="mt-1 grid max-h-[220px] grid-cols-2 gap-x-3 gap-y-1 overflow-y-auto">
+      {cells.data?.items.length === 0 ? <p className="mp-help">{words.noCells}</p> : null}
+      <div className="mt-2 grid max-h-[220px] grid-cols-2 gap-x-3 gap-y-1 overflow-y-auto p-1">
         {cells.data?.items.map((cell) => (
           <Tick
             key={cell.id}
-            checked={props.chosen.includes(cell.id)}
+            checked={chosenIds.has(cell.id)}
             onChange={(event) => {
+              const others = props.chosen.filter(({ id }) => id !== cell.id);
               props.onChange(
-                event.target.checked
-                  ? [...props.chosen, cell.id]
-                  : props.chosen.filter((id) => id !== cell.id),
+                event.target.checked ? [...others, { id: cell.id, serial: cell.serial }] : others,
               );
             }}
           >
-            <span className="font-mono">{cell.serial}</span>
+            <span className="font-mono">{cell.serial ?? words.cellNumber(cell.id)}</span>
           </Tick>
         ))}
       </div>
-      {cells.data?.nextCursor === null || cells.data === undefined ? null : (
+      {cells.data === undefined || cells.data.nextCursor === null ? null : (
         <p className="mp-help">{words.moreCells}</p>
       )}
     </div>

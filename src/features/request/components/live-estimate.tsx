@@ -2,12 +2,13 @@ import { useQuery } from '@tanstack/react-query';
 import { useDeferredValue } from 'react';
 import type { CellTypeDto } from '#shared/contracts/registers.contract.ts';
 import { ErrorState, Loading } from '#src/components/ui/feedback.tsx';
+import { LiveRegion } from '#src/components/ui/live-region.tsx';
 import { useSite } from '#src/hooks/use-site.ts';
 import { tableError } from '#src/lib/table-error.ts';
 import { t } from '#src/texts/t.ts';
 import { basisQuery } from '../api/request-queries.ts';
-import { estimateLot } from '../estimate-input.view.ts';
-import type { Basis } from '../estimate-input.view.ts';
+import { estimateLot, type Basis } from '../estimate-input.view.ts';
+import { estimateSentence, estimatesSentence } from '../estimate-words.view.ts';
 import { looseFields } from '../loose-fields.view.ts';
 import type { RequestDraft } from '../request-draft.view.ts';
 import { EstimatePanel } from './estimate-panel.tsx';
@@ -17,22 +18,40 @@ const words = t.request;
 function OfDraft(props: { draft: RequestDraft; cellTypes: readonly CellTypeDto[]; basis: Basis }) {
   const { draft, cellTypes, basis } = props;
   const fields = looseFields(draft);
-  return fields.lots.map((lot, place) => {
-    const cellType = cellTypes.find((each) => each.id === lot.cellTypeId);
-    const result = estimateLot(fields, lot, cellType, basis);
-    return (
-      <section key={draft.lots[place]?.key} aria-label={words.estimateOfLot(place + 1)}>
-        {draft.lots.length === 1 ? null : <h3>{words.estimateOfLot(place + 1)}</h3>}
-        {result.kind === 'needs' ? (
-          <p className="mp-note">
-            {words.estimateAsks(result.needs.map((need) => words.needs[need]).join(', '))}
-          </p>
-        ) : (
-          <EstimatePanel estimate={result.estimate} safePct={basis.process.safePercentile * 100} />
-        )}
-      </section>
-    );
-  });
+  const results = fields.lots.map((lot) =>
+    estimateLot(
+      fields,
+      lot,
+      cellTypes.find((each) => each.id === lot.cellTypeId),
+      basis,
+    ),
+  );
+  return (
+    <>
+      <LiveRegion message={estimatesSentence(results)} />
+      {results.map((result, place) => (
+        <section
+          key={draft.lots[place]?.key}
+          aria-label={words.estimateLabel(place + 1)}
+          className={place === 0 ? undefined : 'mp-rule-above mt-4 pt-4'}
+        >
+          {results.length === 1 ? null : (
+            <h3 className="mb-2 text-[13px]">{words.estimateOfLot(place + 1)}</h3>
+          )}
+          {result.kind === 'needs' ? (
+            <p className="mp-note">{estimateSentence(result)}</p>
+          ) : (
+            <EstimatePanel
+              estimate={result.estimate}
+              input={result.input}
+              staffedHours={basis.staffedHours}
+              safePct={basis.process.safePercentile * 100}
+            />
+          )}
+        </section>
+      ))}
+    </>
+  );
 }
 
 /** The estimate beside the form: computed here at every key, over the site's reference wiring. */
@@ -44,13 +63,9 @@ export function LiveEstimate(props: { draft: RequestDraft; cellTypes: readonly C
   if (failure !== undefined) {
     return <ErrorState {...failure} />;
   }
-  return (
-    <div aria-live="polite" aria-busy={draft !== props.draft}>
-      {basis.data === undefined ? (
-        <Loading what={words.loadingBasis} />
-      ) : (
-        <OfDraft draft={draft} cellTypes={props.cellTypes} basis={basis.data} />
-      )}
-    </div>
+  return basis.data === undefined ? (
+    <Loading what={words.loadingBasis} />
+  ) : (
+    <OfDraft draft={draft} cellTypes={props.cellTypes} basis={basis.data} />
   );
 }

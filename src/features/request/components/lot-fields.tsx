@@ -63,9 +63,9 @@ function Cells(props: LotFieldsProps) {
           <CellPicker
             cellTypeId={lot.cellTypeId === '' ? null : Number(lot.cellTypeId)}
             projectId={draft.projectId === '' ? null : Number(draft.projectId)}
-            chosen={lot.cellIds}
-            onChange={(cellIds) => {
-              onChange({ cellIds });
+            chosen={lot.cells}
+            onChange={(cells) => {
+              onChange({ cells });
             }}
           />
         </Field>
@@ -165,7 +165,7 @@ export function LotFields(props: LotFieldsProps) {
             label: `${each.name}, ${each.format}, ${formatAh(each.capacityAh)}`,
           }))}
           onChange={(event) => {
-            onChange({ cellTypeId: event.target.value, cellIds: [] });
+            onChange({ cellTypeId: event.target.value, cells: [] });
           }}
         />
       </Field>

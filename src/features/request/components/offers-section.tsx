@@ -244,6 +244,7 @@ export function OffersSection(props: {
   request: RequestDto;
   lotId: number;
   title: string;
+  isProposed: boolean;
   onProposed: () => void;
 }) {
   const site = useSite();
@@ -256,6 +257,11 @@ export function OffersSection(props: {
       title={props.title}
       note={found === undefined ? undefined : <p>{words.slotsNote(found.startsLookedAt)}</p>}
     >
+      {props.isProposed ? (
+        <Notice kind="pass" role="status">
+          {words.proposed}
+        </Notice>
+      ) : null}
       {failure === undefined ? null : <ErrorState {...failure} />}
       {found === undefined && failure === undefined ? (
         <Loading what={words.slotsSearching} />

@@ -1,5 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
-import { useState } from 'react';
+import { useMemo, useState } from 'react';
 import { useNavigate, useParams } from 'react-router-dom';
 import {
   createRequest,
@@ -11,13 +11,19 @@ import { Page } from '#src/components/layout/page.tsx';
 import { Button, LinkButton } from '#src/components/ui/button.tsx';
 import { ErrorState, Loading } from '#src/components/ui/feedback.tsx';
 import { useApiMutation } from '#src/hooks/use-api-mutation.ts';
-import { useSite } from '#src/hooks/use-site.ts';
+import { useMay, useSite } from '#src/hooks/use-site.ts';
 import { errorText } from '#src/lib/error-text.ts';
 import { isProblem } from '#src/lib/problem.ts';
 import { tableError } from '#src/lib/table-error.ts';
 import { t } from '#src/texts/t.ts';
 import { requestQuery } from '../api/request-queries.ts';
-import { draftOf, readDraft, type FieldErrors } from '../request-draft.view.ts';
+import {
+  draftOf,
+  emptyDraft,
+  readDraft,
+  readFreeEntries,
+  type FieldErrors,
+} from '../request-draft.view.ts';
 import { requestReaders } from '../refreshes.ts';
 import { useRequestDraft } from '../use-request-draft.ts';
 import { RequestForm } from './request-form.tsx';
@@ -30,16 +36,16 @@ function mergeErrors(local: FieldErrors, error: unknown): FieldErrors {
   return isProblem(error) ? new Map([...error.fieldErrors, ...local]) : local;
 }
 
-/** A new request: kept as a draft, then its page offers slots. */
-export function NewRequestPage() {
+function NewForm() {
   const site = useSite();
   const navigate = useNavigate();
-  const state = useRequestDraft(`new-request-${site.code}`, null);
+  const [saved] = useState(() => ({ version: 0, draft: emptyDraft() }));
+  const state = useRequestDraft(`new-request-${site.code}`, saved);
   const [local, setLocal] = useState<FieldErrors>(noErrors);
   const create = useApiMutation(createRequest, {
     refreshes: requestReaders,
     onDone: (made) => {
-      state.forget();
+      state.finish();
       void navigate(paths.request.href(site.code, made.id));
     },
   });
@@ -51,22 +57,32 @@ export function NewRequestPage() {
     }
   };
   return (
-    <Page title={words.newTitle} intro={<p>{words.newIntro}</p>}>
-      <RequestForm
-        state={state}
-        errors={mergeErrors(local, create.error)}
-        failure={errorText(create.error)}
-        actions={
-          <>
-            <Button kind="primary" busy={create.isPending} onClick={save}>
-              {words.saveAndFind}
-            </Button>
-            <LinkButton kind="link" to={paths.requests.href(site.code)}>
-              {words.leave}
-            </LinkButton>
-          </>
-        }
-      />
+    <RequestForm
+      state={state}
+      errors={mergeErrors(local, create.error)}
+      failure={errorText(create.error)}
+      onSave={save}
+      actions={
+        <>
+          <Button kind="primary" type="submit" busy={create.isPending}>
+            {words.saveAndFind}
+          </Button>
+          <LinkButton kind="link" to={paths.requests.href(site.code)}>
+            {words.leave}
+          </LinkButton>
+        </>
+      }
+    />
+  );
+}
+
+/** A new request: kept as a draft, then its page offers slots. */
+export function NewRequestPage() {
+  const may = useMay();
+  const isAllowed = may('request.create');
+  return (
+    <Page title={words.newTitle} intro={<p>{isAllowed ? words.newIntro : words.mayNotAsk}</p>}>
+      {isAllowed ? <NewForm /> : null}
     </Page>
   );
 }
@@ -75,36 +91,47 @@ function EditForm(props: { request: RequestDto }) {
   const { request } = props;
   const site = useSite();
   const navigate = useNavigate();
-  const state = useRequestDraft(
-    `request-${request.id}-${request.version}`,
-    draftOf(request, site.zone),
+  const saved = useMemo(
+    () => ({ version: request.version, draft: draftOf(request, site.zone) }),
+    [request, site.zone],
   );
+  const state = useRequestDraft(`request-${site.code}-${request.id}`, saved);
   const [local, setLocal] = useState<FieldErrors>(noErrors);
+  const isBooked = request.state === 'booked' || request.state === 'partly-booked';
   const update = useApiMutation(updateRequest, {
     refreshes: requestReaders,
     onDone: () => {
-      state.forget();
+      state.finish();
       void navigate(paths.request.href(site.code, request.id));
     },
   });
   const save = () => {
-    const read = readDraft(state.draft, site.zone);
+    const read = isBooked
+      ? readFreeEntries(state.draft, request, site.zone)
+      : readDraft(state.draft, site.zone);
     setLocal(read.errors);
     if (read.fields !== null) {
       update.mutate({
         params: { site: site.code, id: request.id },
-        body: { ...read.fields, version: request.version },
+        body: { ...read.fields, version: state.version },
       });
     }
   };
   return (
     <RequestForm
       state={state}
+      isBooked={isBooked}
       errors={mergeErrors(local, update.error)}
       failure={errorText(update.error)}
+      onSave={save}
       actions={
         <>
-          <Button kind="primary" busy={update.isPending} onClick={save}>
+          <Button
+            kind="primary"
+            type="submit"
+            busy={update.isPending}
+            why={state.isBehind ? words.behindWhy : undefined}
+          >
             {words.saveChanges}
           </Button>
           <LinkButton kind="link" to={paths.request.href(site.code, request.id)}>
@@ -116,18 +143,29 @@ function EditForm(props: { request: RequestDto }) {
   );
 }
 
-/** Changes a draft or a submitted request; of a booked one the server lets only note and needed-by change. */
+function editIntro(request: RequestDto | undefined): string | undefined {
+  if (request === undefined) {
+    return undefined;
+  }
+  if (request.state === 'booked' || request.state === 'partly-booked') {
+    return words.editBooked;
+  }
+  return request.proposal === null ? words.editPlain : words.editIntro;
+}
+
+/** Changes a draft or a submitted request; of a booked one only the note and the needed-by day. */
 export function EditRequestPage() {
   const site = useSite();
   const { id = '' } = useParams();
   const query = useQuery(requestQuery(site.code, Number(id)));
   const failure = tableError(query);
   const title = words.editTitle(Number(id));
+  const intro = editIntro(query.data);
   return (
-    <Page title={title} intro={<p>{words.editIntro}</p>}>
+    <Page title={title} intro={intro === undefined ? undefined : <p>{intro}</p>}>
       {failure === undefined ? null : <ErrorState {...failure} />}
       {query.isPending ? <Loading what={title} /> : null}
-      {query.data === undefined ? null : <EditForm key={query.data.version} request={query.data} />}
+      {query.data === undefined ? null : <EditForm key={query.data.id} request={query.data} />}
     </Page>
   );
 }

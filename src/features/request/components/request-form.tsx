@@ -1,5 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
-import type { ReactNode } from 'react';
+import { useEffect, useRef, type ReactNode } from 'react';
 import { Section, TwoColumns } from '#src/components/layout/page.tsx';
 import { Button } from '#src/components/ui/button.tsx';
 import { ErrorState } from '#src/components/ui/feedback.tsx';
@@ -11,6 +11,8 @@ import { cellTypesQuery } from '../api/request-queries.ts';
 import { emptyLot, type FieldErrors, type LotDraft } from '../request-draft.view.ts';
 import type { DraftState } from '../use-request-draft.ts';
 import { AimFields } from './aim-fields.tsx';
+import { FormNotices } from './form-notices.tsx';
+import { LeaveGuard } from './leave-guard.tsx';
 import { LiveEstimate } from './live-estimate.tsx';
 import { LotFields } from './lot-fields.tsx';
 import { OrderFields } from './order-fields.tsx';
@@ -66,13 +68,30 @@ function Lots(props: {
   );
 }
 
-/** The form of a request with its estimate beside it; the page around it says what to do with it. */
-export function RequestForm(props: {
+/** After a refused send the first marked field takes the focus, so that nobody has to look for it. */
+function useFocusOnFault(errors: FieldErrors) {
+  const form = useRef<HTMLFormElement>(null);
+  useEffect(() => {
+    if (errors.size > 0) {
+      form.current
+        ?.querySelector<HTMLElement>('[aria-invalid="true"]:is(input, select, textarea)')
+        ?.focus();
+    }
+  }, [errors]);
+  return form;
+}
+
+type RequestFormProps = {
   state: DraftState;
   errors: FieldErrors;
   failure: string | undefined;
   actions: ReactNode;
-}) {
+  onSave: () => void;
+  /** Of a booked request only the note and the needed-by day are shown. */
+  isBooked?: boolean | undefined;
+};
+
+function What(props: Pick<RequestFormProps, 'state' | 'errors'>) {
   const { state, errors } = props;
   const site = useSite();
   const cellTypes = useQuery(cellTypesQuery(site.code));
@@ -80,36 +99,48 @@ export function RequestForm(props: {
   const errorOf = (pointer: string) => errors.get(pointer);
   const types = cellTypes.data?.items ?? [];
   return (
-    <>
-      {state.wasRestored && state.isTouched ? (
-        <Notice
-          kind="info"
-          role="status"
-          ways={
-            <Button kind="link" onClick={state.startAfresh}>
-              {words.discard}
-            </Button>
-          }
-        >
-          {words.restored}
-        </Notice>
-      ) : null}
-      <Section title={words.what} note={<p>{words.whatNote}</p>}>
-        {failure === undefined ? null : <ErrorState {...failure} />}
-        <TwoColumns kind="form">
-          <div>
-            <Lots state={state} cellTypes={types} errorOf={errorOf} />
-            <AimFields draft={state.draft} errorOf={errorOf} onChange={state.set} />
-          </div>
-          <LiveEstimate draft={state.draft} cellTypes={types} />
-        </TwoColumns>
-      </Section>
+    <Section title={words.what} note={<p>{words.whatNote}</p>}>
+      <FormNotices state={state} />
+      {failure === undefined ? null : <ErrorState {...failure} />}
+      <TwoColumns kind="form">
+        <div>
+          <Lots state={state} cellTypes={types} errorOf={errorOf} />
+          <AimFields draft={state.draft} errorOf={errorOf} onChange={state.set} />
+        </div>
+        <LiveEstimate draft={state.draft} cellTypes={types} />
+      </TwoColumns>
+    </Section>
+  );
+}
+
+/** The form of a request with its estimate beside it; the page around it says what to do with it. */
+export function RequestForm(props: RequestFormProps) {
+  const { state, errors } = props;
+  const form = useFocusOnFault(errors);
+  return (
+    <form
+      ref={form}
+      className="mp-rule-above"
+      noValidate
+      onSubmit={(event) => {
+        event.preventDefault();
+        props.onSave();
+      }}
+    >
+      <LeaveGuard mayLeave={state.mayLeave} />
+      {props.isBooked ? null : <What state={state} errors={errors} />}
       <Section title={words.order}>
-        <OrderFields draft={state.draft} errorOf={errorOf} onChange={state.set} />
+        {props.isBooked ? <FormNotices state={state} /> : null}
+        <OrderFields
+          draft={state.draft}
+          isBooked={props.isBooked ?? false}
+          errorOf={(pointer) => errors.get(pointer)}
+          onChange={state.set}
+        />
         <div className="mt-4" aria-live="polite">
-          {errors.size === 0 ? null : (
+          {errors.size === 0 || props.failure !== undefined ? null : (
             <Notice kind="stop" role="alert">
-              {words.fix}
+              {words.fix(errors.size)}
             </Notice>
           )}
           {props.failure === undefined ? null : (
@@ -120,6 +151,6 @@ export function RequestForm(props: {
         </div>
         <div className="mp-acts mt-3">{props.actions}</div>
       </Section>
-    </>
+    </form>
   );
 }

@@ -160,16 +160,12 @@ function LotWithSlots(props: { request: RequestDto; lot: LotDto; place: number }
   return (
     <>
       <LotSection lot={lot} place={props.place} />
-      {isProposed ? (
-        <Notice kind="pass" role="status">
-          {words.proposed}
-        </Notice>
-      ) : null}
       {canBook ? (
         <OffersSection
           request={request}
           lotId={lot.id}
           title={title}
+          isProposed={isProposed}
           onProposed={() => {
             setIsProposed(true);
           }}
