@@ -20,5 +20,6 @@ export function openBrowser(): Promise<Browser> {
 /** Signs a demo person in through the stand-in and ends on the page asked for. */
 export async function signIn(page: Page, url: string, sub: string, path: string): Promise<void> {
   await page.goto(`${url}/auth/sign-in?as=${sub}&return=${encodeURIComponent(path)}`);
-  await page.waitForURL((address) => address.origin === url && address.pathname.startsWith(path));
+  const { pathname } = new URL(path, url);
+  await page.waitForURL((address) => address.origin === url && address.pathname === pathname);
 }

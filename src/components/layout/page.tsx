@@ -9,6 +9,8 @@ export function Page(props: {
   intro?: ReactNode;
   /** At the right end of the head; one filled button at most. */
   actions?: ReactNode;
+  /** What an act has just done, under the head. */
+  notice?: ReactNode;
   /** More under the head, before the first section: a fact list. */
   lead?: ReactNode;
   children?: ReactNode;
@@ -26,6 +28,7 @@ export function Page(props: {
             <div className="mp-intro">{props.intro}</div>
             {props.actions === undefined ? null : <div className="mp-acts">{props.actions}</div>}
           </div>
+          {props.notice}
           {props.lead}
         </div>
       </div>

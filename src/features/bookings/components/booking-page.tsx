@@ -164,13 +164,15 @@ function Loaded(props: { booking: BookingDto }) {
           {mayCancel ? <CancelBooking booking={booking} /> : null}
         </>
       }
+      notice={
+        hasMoved ? (
+          <Notice kind="pass" role="status">
+            {words.moved}
+          </Notice>
+        ) : null
+      }
       lead={<Lead booking={booking} />}
     >
-      {hasMoved ? (
-        <Notice kind="pass" role="status">
-          {words.moved}
-        </Notice>
-      ) : null}
       {isMoving ? (
         <MoveSection
           booking={booking}

@@ -150,13 +150,15 @@ export function InstrumentPage() {
           <InstrumentActions instrument={instrument} onAffected={setAffected} />
         </>
       }
+      notice={
+        affected === null ? null : (
+          <Notice kind={affected.length === 0 ? 'info' : 'caution'} role="status">
+            {words.affected(affected.length)}
+          </Notice>
+        )
+      }
       lead={<Lead instrument={instrument} />}
     >
-      {affected === null ? null : (
-        <Notice kind={affected.length === 0 ? 'info' : 'caution'} role="status">
-          {words.affected(affected.length)}
-        </Notice>
-      )}
       {affected === null || affected.length === 0 ? null : (
         <BookingsSection title={t.ui.atRisk} rows={affected} />
       )}

@@ -186,13 +186,15 @@ function Loaded(props: { record: CalibrationDto }) {
           ) : null}
         </>
       }
+      notice={
+        affected === null ? null : (
+          <Notice kind={affected.length === 0 ? 'pass' : 'caution'} role="status">
+            {words.approved(affected.length)}
+          </Notice>
+        )
+      }
       lead={<Facts record={record} />}
     >
-      {affected === null ? null : (
-        <Notice kind={affected.length === 0 ? 'pass' : 'caution'} role="status">
-          {words.approved(affected.length)}
-        </Notice>
-      )}
       {affected === null || affected.length === 0 ? null : <Affected rows={affected} />}
       <Scopes record={record} />
       <CertificateSection record={record} />

@@ -46,8 +46,13 @@ export function RecordPage() {
   const [replaces] = useUrlState('replaces');
   const replacesId = /^\d+$/.test(replaces) ? Number(replaces) : null;
   return (
-    <Page title={words.newTitle} intro={<p>{words.newIntro}</p>}>
-      {replacesId === null ? null : <Notice kind="info">{words.correcting(replacesId)}</Notice>}
+    <Page
+      title={words.newTitle}
+      intro={<p>{words.newIntro}</p>}
+      notice={
+        replacesId === null ? null : <Notice kind="info">{words.correcting(replacesId)}</Notice>
+      }
+    >
       <Section title={words.instrument}>
         <div className="max-w-[560px]">
           <Field label={words.instrument} help={words.instrumentHelp}>
