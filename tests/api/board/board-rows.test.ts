@@ -132,7 +132,7 @@ test.each([
   const { status, problem } = await bench.app.callRefused(getBoard, bench.engineer, {
     query: { from, to },
   });
-  expect(status).toBe(422);
+  expect([status, problem.code]).toEqual([422, 'input.invalid']);
   expect(problem.errors).toEqual([
     {
       detail: 'A window ends after it starts and is at most 36 days long.',

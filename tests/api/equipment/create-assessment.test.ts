@@ -115,7 +115,7 @@ test('a day to come, a logger nobody has and figures without sense are refused w
       params: { tag },
       body: { ...judged, ...change },
     });
-    expect([pointer, status]).toEqual([pointer, 422]);
+    expect([pointer, status, problem.code]).toEqual([pointer, 422, 'input.invalid']);
     expect(problem.errors?.map((fault) => fault.pointer)).toEqual([pointer]);
   }
 });

@@ -96,3 +96,22 @@ test('strangers, wrong bookings and wrong shapes are refused', async () => {
   ]);
   expect(refusals.map(({ status }) => status)).toEqual([401, 403, 404, 404, 422]);
 });
+
+test('a lot that lacks something or is booked already has nothing to check', async () => {
+  const body = { chamberTag: bench.chamber.chamberTag, startAt: '2026-03-04T09:30:00Z' };
+  const open = await bench.request({ request: { state: 'draft', setTempMdegc: null } });
+  const incomplete = await bench.app.callRefused(checkPlacement, bench.engineer, {
+    params: { id: open.requestId, lotId: open.lotId },
+    body,
+  });
+  expect(incomplete.problem.code).toBe('request.incomplete');
+  expect(incomplete.problem.detail).toContain('the set temperature');
+
+  const booked = await bench.request();
+  await bench.book(booked);
+  const taken = await bench.app.callRefused(checkPlacement, bench.engineer, {
+    params: { id: booked.requestId, lotId: booked.lotId },
+    body,
+  });
+  expect(taken.problem.code).toBe('request.state');
+});
