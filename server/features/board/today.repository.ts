@@ -13,17 +13,18 @@ import { requestLotsTable, requestsTable } from '#server/db/tables/request.table
 import { unitsTable } from '#server/db/tables/unit.table.ts';
 import type { Span } from '#shared/domain/intervals/types.ts';
 
-/** Doors opened and holds ended at a site during a span, as planned. */
+const doorPhases = ['connect', 'measure', 'unload'] as const;
+
+/** Doors opened and measurements begun at a site during a span, as planned. */
 export async function listDoorPhases(reader: Reader, siteId: number, span: Span) {
   const t = loadPhasesTable;
   return reader
     .select({
       loadId: t.loadId,
       chamberTag: instrumentsTable.tag,
-      phase: t.phase,
+      phase: sql<(typeof doorPhases)[number]>`${t.phase}`,
       during: t.during,
       setTempMdegc: chamberLoadsTable.setTempMdegc,
-      loadState: chamberLoadsTable.state,
     })
     .from(t)
     .innerJoin(chamberLoadsTable, eq(chamberLoadsTable.id, t.loadId))
@@ -32,7 +33,7 @@ export async function listDoorPhases(reader: Reader, siteId: number, span: Span)
       and(
         eq(instrumentsTable.siteId, siteId),
         eq(t.live, true),
-        inArray(t.phase, ['connect', 'unload', 'measure']),
+        inArray(t.phase, [...doorPhases]),
         sql`lower(${t.during}) <@ ${formatRange(span)}::tstzrange`,
       ),
     )
