@@ -111,7 +111,10 @@ export function DayTide(props: {
   const startText = startRoom(points, 12 + longText.length * 5.9) ? longText : `${startCount}`;
   const endCount = countAt(props.steps, props.window.endMs);
   const isLevelWithDoors = first !== undefined && Math.abs(first.y - 6 - 28) < 11;
-  const reserved = isLevelWithDoors ? [[0, 12 + startText.length * 5.9] as const] : [];
+  const reserved = [
+    [now - 2, now + 2] as const,
+    ...(isLevelWithDoors ? [[0, 12 + startText.length * 5.9] as const] : []),
+  ];
   return (
     <div className="mp-drawing" ref={ref}>
       <svg width={width} height="112" role="img" aria-label={props.label}>

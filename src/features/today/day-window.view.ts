@@ -25,6 +25,18 @@ export function dayWindow(today: Pick<Today, 'day' | 'doors' | 'staffed'>, zone:
   };
 }
 
+const pastKept = 2;
+const mostUnfolded = 4;
+
+/** How many of the day's first lines are over and folded away, once they are more than a few. */
+export function countFolded(
+  happenings: readonly Pick<Today['happenings'][number], 'at'>[],
+  nowMs: number,
+): number {
+  const past = happenings.filter(({ at }) => Date.parse(at) < nowMs).length;
+  return past > mostUnfolded ? past - pastKept : 0;
+}
+
 /** `08:00 to 18:00`, or several such spans. */
 export function staffedText(
   staffed: Today['staffed'],

@@ -26,6 +26,7 @@ export const today = {
     state: 'State',
     act: '',
   },
+  earlierToday: (count: number) => `Show ${count} earlier today`,
   nothing: 'Nothing is planned for today.',
   open: 'Open',
   actions: 'What to do',

@@ -1,46 +1,41 @@
+import { useState } from 'react';
 import { Link } from 'react-router-dom';
 import type { Today } from '#shared/contracts/board.contract.ts';
 import { DayTide } from '#src/components/drawing/day-tide.tsx';
-import { Section } from '#src/components/layout/page.tsx';
-import { Mark, type MarkName, type Tone } from '#src/components/ui/mark.tsx';
+import { Button } from '#src/components/ui/button.tsx';
+import type { MarkName } from '#src/components/ui/mark.tsx';
+import { State } from '#src/components/ui/state.tsx';
 import { Table } from '#src/components/ui/table.tsx';
 import { useNow } from '#src/hooks/use-now.ts';
 import { useSite } from '#src/hooks/use-site.ts';
 import { formatClock } from '#src/lib/format-date.ts';
 import { t } from '#src/texts/t.ts';
-import { dayWindow } from '../day-window.view.ts';
+import { countFolded, dayWindow } from '../day-window.view.ts';
 
 const words = t.today;
 type Happening = Today['happenings'][number];
 
+/** The figure of a booking fills as far as it has got. */
 const marks: Record<Happening['kind'], MarkName> = {
-  load: 'running',
+  load: 'confirmed',
+  settled: 'running',
   unload: 'done',
   outage: 'out-of-service',
   due: 'due-soon',
-  settled: 'pass',
 };
 
-function StateWord(props: { happening: Happening }) {
-  const tone: Tone = props.happening.tone;
-  return (
-    <span className="inline-flex items-center gap-2">
-      <Mark name={marks[props.happening.kind]} tone={tone} />
-      <span>{props.happening.state}</span>
-    </span>
-  );
-}
-
 /** The day drawn as a tide of taken positions with its doors, and what happens in it. */
-export function DaySection(props: { today: Today }) {
+export function DaySheet(props: { today: Today }) {
   const { today } = props;
   const site = useSite();
   const nowMs = useNow();
+  const [isWhole, setIsWhole] = useState(false);
   const window = dayWindow(today, site.zone);
   const now = today.tide.filter((step) => Date.parse(step.at) <= nowMs).at(-1)?.count ?? 0;
   const heads = words.happeningColumns;
+  const hidden = isWhole ? 0 : countFolded(today.happenings, nowMs);
   return (
-    <Section title={words.day} note={<p>{words.dayNote}</p>}>
+    <>
       <DayTide
         window={window}
         zone={site.zone}
@@ -57,9 +52,19 @@ export function DaySection(props: { today: Today }) {
         }))}
         label={words.tide(now, today.positions)}
       />
+      {hidden === 0 ? null : (
+        <Button
+          kind="link"
+          onClick={() => {
+            setIsWhole(true);
+          }}
+        >
+          {words.earlierToday(hidden)}
+        </Button>
+      )}
       <Table
         caption={words.day}
-        rows={today.happenings}
+        rows={today.happenings.slice(hidden)}
         rowKey={(row) => `${row.at}-${row.what}`}
         rowState={(row) => (Date.parse(row.at) < nowMs ? 'past' : undefined)}
         empty={words.nothing}
@@ -73,7 +78,15 @@ export function DaySection(props: { today: Today }) {
           },
           { key: 'what', head: heads.what, cell: (row) => row.what },
           { key: 'touches', head: heads.touches, cell: (row) => row.touches },
-          { key: 'state', head: heads.state, cell: (row) => <StateWord happening={row} /> },
+          {
+            key: 'state',
+            head: heads.state,
+            cell: (row) => (
+              <State mark={marks[row.kind]} tone={row.tone}>
+                {row.state}
+              </State>
+            ),
+          },
           {
             key: 'act',
             head: '',
@@ -88,6 +101,6 @@ export function DaySection(props: { today: Today }) {
           },
         ]}
       />
-    </Section>
+    </>
   );
 }

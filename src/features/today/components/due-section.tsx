@@ -14,7 +14,8 @@ import { t } from '#src/texts/t.ts';
 import { dueWindow } from '../day-window.view.ts';
 
 const words = t.today;
-const narrowest = 200;
+/** Below this the table is a list and each strip has the whole width. */
+const listWidth = 600;
 const share = 0.46;
 
 /** What falls due in the next weeks, drawn against the bookings it would cut off. */
@@ -23,7 +24,7 @@ export function DueSection(props: { rows: Today['fallsDue'] }) {
   const nowMs = useNow();
   const { currentYear } = siteCalendar(nowMs, site.zone);
   const [ref, sheet] = useElementWidth<HTMLDivElement>(1180);
-  const width = Math.max(narrowest, Math.round(sheet * share));
+  const width = sheet < listWidth ? sheet : Math.round(sheet * share);
   const window = dueWindow(nowMs);
   const heads = words.dueColumns;
   const dueMs = (day: string) =>
@@ -36,6 +37,8 @@ export function DueSection(props: { rows: Today['fallsDue'] }) {
           rows={props.rows}
           rowKey={(row) => row.tag}
           empty={words.noDue}
+          stack
+          middle
           columns={[
             {
               key: 'instrument',

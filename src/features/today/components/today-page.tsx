@@ -9,7 +9,7 @@ import { tableError } from '#src/lib/table-error.ts';
 import { t } from '#src/texts/t.ts';
 import { todayQuery } from '../api/get-today.ts';
 import { staffedText } from '../day-window.view.ts';
-import { DaySection } from './day-section.tsx';
+import { DaySheet } from './day-sheet.tsx';
 import { DueSection } from './due-section.tsx';
 import { WaitsSection } from './waits-section.tsx';
 
@@ -32,18 +32,25 @@ export function TodayPage() {
     <Page
       title={title}
       subtitle={
-        query.data === undefined
-          ? site.name
-          : hours === ''
-            ? words.nobody(site.name)
-            : words.staffed(site.name, hours)
+        query.data === undefined ? (
+          site.name
+        ) : (
+          <>
+            {hours === '' ? words.nobody(site.name) : words.staffed(site.name, hours)}
+            <span className="mp-note mp-margin-note block">{words.dayNote}</span>
+          </>
+        )
       }
-      intro={failure === undefined ? undefined : <ErrorState {...failure} />}
+      intro={
+        <>
+          {failure === undefined ? null : <ErrorState {...failure} />}
+          {query.isPending ? <Loading what={words.title} /> : null}
+        </>
+      }
+      lead={query.data === undefined ? undefined : <DaySheet today={query.data} />}
     >
-      {query.isPending ? <Loading what={words.title} /> : null}
       {query.data === undefined ? null : (
         <>
-          <DaySection today={query.data} />
           <WaitsSection waits={query.data.waits} />
           <DueSection rows={query.data.fallsDue} />
         </>
