@@ -81,6 +81,7 @@ export const requestSchema = z.object({
   lots: z.array(lotSchema),
   priority: z.enum(priorities),
   declineReason: z.string().nullable(),
+  withdrawReason: z.string().nullable(),
   /** The slot the engineer would like; it reserves nothing. */
   proposal: z
     .object({

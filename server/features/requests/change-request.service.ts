@@ -2,7 +2,6 @@ import type { SignedIn, SiteScope } from '#server/actor.ts';
 import type { Tx } from '#server/db/client.ts';
 import type { Deps } from '#server/deps.ts';
 import { recordAudit } from '#server/features/audit/audit.service.ts';
-import { reassessRequest } from '#server/features/bookings/reassess-bookings.service.ts';
 import { notFound, problem, refused, staleVersion } from '#server/problem.ts';
 import type { RequestDto, RequestFields } from '#shared/contracts/requests.contract.ts';
 import type { Action } from '#shared/domain/policies/actions.ts';
@@ -66,8 +65,6 @@ export async function updateRequest(
       requireTimes(fields);
       const { note, neededByAt } = toColumns(fields);
       await writeRequest(tx, request, { note, neededByAt }, at);
-      // A booking that ends too late for the new day is at risk from now on, and the other way round.
-      await reassessRequest(deps, tx, who.site, request.id, who.actor);
       return;
     }
     requireState(request, ['draft', 'submitted']);
@@ -107,7 +104,7 @@ export async function withdrawRequest(
   wish: { readonly version: number; readonly reason: string },
 ): Promise<RequestDto> {
   const { version, reason } = wish;
-  return change(deps, who, { action: 'request.withdraw', version }, async (tx, request) => {
+  return change(deps, who, { action: 'request.withdraw', version, reason }, async (tx, request) => {
     const lots = await listLots(tx, request.id);
     const [booking] = await listBookingsOfLots(
       tx,
@@ -135,7 +132,7 @@ export async function declineRequest(
   wish: { readonly version: number; readonly reason: string },
 ): Promise<RequestDto> {
   const { version, reason } = wish;
-  return change(deps, who, { action: 'request.decline', version }, async (tx, request) => {
+  return change(deps, who, { action: 'request.decline', version, reason }, async (tx, request) => {
     requireState(request, ['submitted']);
     await writeRequest(
       tx,
@@ -150,7 +147,7 @@ export async function declineRequest(
 async function change(
   deps: Changing,
   who: Who,
-  wish: { readonly action: Action; readonly version: number },
+  wish: { readonly action: Action; readonly version: number; readonly reason?: string },
   act: (tx: Tx, request: RequestRow, before: RequestDto) => Promise<void>,
 ): Promise<RequestDto> {
   const { actor, site, requestId } = who;
@@ -170,7 +167,10 @@ async function change(
     await act(tx, request, before);
     const after = await describeRequest(tx, site, requestId);
     const isSubmitted = before.state === 'draft' && after.state === 'submitted';
-    await audit(deps, tx, who, isSubmitted ? 'request.submit' : wish.action, before, after);
+    await audit(deps, tx, who, isSubmitted ? 'request.submit' : wish.action, before, {
+      ...after,
+      ...(wish.reason === undefined ? {} : { reason: wish.reason }),
+    });
     return after;
   });
 }
@@ -281,7 +281,7 @@ async function audit(
   { actor, site, requestId }: Who,
   action: string,
   before: RequestDto | null,
-  after: RequestDto,
+  after: RequestDto & { readonly reason?: string },
 ): Promise<void> {
   await recordAudit(deps, tx, {
     actor,

@@ -48,6 +48,7 @@ export function presentRequest(input: {
     lots: input.lots.map((lot) => presentLot(lot, input)),
     priority: request.priority,
     declineReason: request.declineReason,
+    withdrawReason: request.withdrawReason,
     proposal: proposalOf(request),
     createdAt: request.createdAt.toISOString(),
     submittedAt: request.submittedAt?.toISOString() ?? null,

@@ -1,4 +1,17 @@
-import { and, asc, desc, eq, exists, ilike, inArray, ne, or, sql, type SQL } from 'drizzle-orm';
+import {
+  and,
+  asc,
+  desc,
+  eq,
+  exists,
+  ilike,
+  inArray,
+  isNotNull,
+  ne,
+  or,
+  sql,
+  type SQL,
+} from 'drizzle-orm';
 import type { Reader, Tx } from '#server/db/client.ts';
 import { bookingsTable } from '#server/db/tables/booking.table.ts';
 import { cellTypesTable, cellsTable } from '#server/db/tables/cell.table.ts';
@@ -124,8 +137,11 @@ export type RequestFilter = {
   readonly siteId: number;
   /** Of the site, for what a calendar day means. */
   readonly zone: string;
-  /** Null: every project. */
-  readonly visibleTo: { readonly personId: number; readonly projectIds: readonly number[] } | null;
+  /** Own requests, and those of these projects; null: of every project. */
+  readonly visibleTo: {
+    readonly personId: number;
+    readonly projectIds: readonly number[] | null;
+  };
   readonly states?: readonly RequestState[];
   readonly kind?: MeasurementKind;
   readonly projectId?: number;
@@ -199,12 +215,12 @@ function conditionsOf(reader: Reader, filter: RequestFilter): (SQL | undefined)[
   const { states, kind, projectId, requesterId, neededBefore, visibleTo } = filter;
   return [
     eq(r.siteId, filter.siteId),
-    visibleTo === null
-      ? undefined
-      : or(
-          eq(r.requesterId, visibleTo.personId),
-          inArray(r.projectId, [...visibleTo.projectIds, -1]),
-        ),
+    or(
+      eq(r.requesterId, visibleTo.personId),
+      visibleTo.projectIds === null
+        ? isNotNull(r.projectId)
+        : inArray(r.projectId, [...visibleTo.projectIds]),
+    ),
     states === undefined ? undefined : inArray(r.state, [...states]),
     kind === undefined ? undefined : eq(r.kind, kind),
     projectId === undefined ? undefined : eq(r.projectId, projectId),

@@ -52,7 +52,10 @@ function filterOf(actor: SignedIn, site: SiteScope, query: Query): RequestFilter
   return {
     siteId: site.id,
     zone: site.zone,
-    visibleTo: seesEveryProject(actor, site) ? null : actor,
+    visibleTo: {
+      personId: actor.personId,
+      projectIds: seesEveryProject(actor, site) ? null : actor.projectIds,
+    },
     ...(state === undefined ? {} : { states: state }),
     ...(kind === undefined ? {} : { kind }),
     ...(projectId === undefined ? {} : { projectId }),
