@@ -168,6 +168,7 @@ const saved: RequestDto = {
   note: 'as agreed',
   priority: 'normal',
   declineReason: null,
+  withdrawReason: null,
   proposal: null,
   createdAt: '2026-06-01T09:00:00.000Z',
   submittedAt: '2026-06-02T09:00:00.000Z',
