@@ -1,4 +1,5 @@
 import { queryOptions } from '@tanstack/react-query';
+import { getWaterline } from '#shared/contracts/board.contract.ts';
 import { findOffers } from '#shared/contracts/offers.contract.ts';
 import {
   getEstimateBasis,
@@ -9,6 +10,7 @@ import {
 } from '#shared/contracts/registers.contract.ts';
 import { getRequest } from '#shared/contracts/requests.contract.ts';
 import { apiKey, callApi } from '#src/lib/call-api.ts';
+import { lifetimeMs } from '../offers.view.ts';
 
 const registerLifeMs = 300_000;
 
@@ -81,6 +83,8 @@ export function offersQuery(site: string, id: number, lotId: number) {
     queryKey: apiKey(findOffers, input),
     queryFn: ({ signal }) => callApi(findOffers, { ...input, signal }),
     staleTime: 60_000,
+    // Offers run out; while somebody looks at them they are searched again in time.
+    refetchInterval: ({ state }) => (state.data === undefined ? false : lifetimeMs(state.data)),
   });
 }
 
@@ -89,5 +93,14 @@ export function deviationsQuery(site: string, id: number) {
   return queryOptions({
     queryKey: apiKey(listDeviations, { params }),
     queryFn: ({ signal }) => callApi(listDeviations, { params, signal }),
+  });
+}
+
+export function chambersQuery(site: string) {
+  const params = { site };
+  return queryOptions({
+    queryKey: apiKey(getWaterline, { params }),
+    queryFn: ({ signal }) => callApi(getWaterline, { params, signal }),
+    staleTime: registerLifeMs,
   });
 }

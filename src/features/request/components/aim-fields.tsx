@@ -66,10 +66,9 @@ function Tolerance({ draft, errorOf, onChange }: AimProps) {
           }}
         />
       </Field>
-      <Field label={isRelative ? '±' : `± ${words.tolerance}`} error={errorOf('#/tolerance')}>
+      <Field label={words.within} error={errorOf('#/tolerance')}>
         <NumberInput
           unit={isRelative ? '%' : 'µA'}
-          aria-label={words.tolerance}
           value={isRelative ? draft.tolerancePct : draft.toleranceUa}
           onChange={(event) => {
             onChange(

@@ -69,14 +69,16 @@ export function CellPicker(props: PickerProps) {
   return (
     <div>
       <ChosenCells chosen={props.chosen} onChange={props.onChange} />
-      <TextInput
-        type="search"
-        aria-label={words.findCells}
-        value={text}
-        onChange={(event) => {
-          setText(event.target.value);
-        }}
-      />
+      <label>
+        <span className="mp-help">{words.findCells}</span>
+        <TextInput
+          type="search"
+          value={text}
+          onChange={(event) => {
+            setText(event.target.value);
+          }}
+        />
+      </label>
       {failure === undefined ? null : <ErrorState {...failure} />}
       {cells.isLoading ? <Loading /> : null}
       {cells.data?.items.length === 0 ? <p className="mp-help">{words.noCells}</p> : null}

@@ -7,7 +7,7 @@ import {
 } from '#shared/contracts/registers.contract.ts';
 import type { RequestDto } from '#shared/contracts/requests.contract.ts';
 import { checkRules } from '#shared/domain/checks/check-rules.ts';
-import { checkCodes, type CheckCode } from '#shared/domain/checks/types.ts';
+import type { CheckCode } from '#shared/domain/checks/types.ts';
 import { Section } from '#src/components/layout/page.tsx';
 import { Button } from '#src/components/ui/button.tsx';
 import { Dialog } from '#src/components/ui/dialog.tsx';
@@ -24,10 +24,10 @@ import { fromSiteInput } from '#src/lib/site-time.ts';
 import { tableError } from '#src/lib/table-error.ts';
 import { t } from '#src/texts/t.ts';
 import { deviationsQuery } from '../api/request-queries.ts';
+import { liftableCodes } from '../offers.view.ts';
 import { requestReaders } from '../refreshes.ts';
 
 const words = t.request;
-const liftable = checkCodes.filter((code) => !checkRules[code].isNeverLifted);
 const looks = {
   asked: { mark: 'to-do', tone: 'marigold' },
   granted: { mark: 'pass', tone: 'reed' },
@@ -35,12 +35,12 @@ const looks = {
   expired: { mark: 'done', tone: 'ink' },
 } as const;
 
-function AskDialog(props: { request: RequestDto; onClose: () => void }) {
+function AskDialog(props: { request: RequestDto; rule: CheckCode | 'any'; onClose: () => void }) {
   const site = useSite();
-  const [code, setCode] = useState<CheckCode | ''>('');
+  const [code, setCode] = useState<CheckCode | ''>(props.rule === 'any' ? '' : props.rule);
   const [reason, setReason] = useState('');
   const ask = useApiMutation(askDeviation, { refreshes: requestReaders, onDone: props.onClose });
-  const isReady = code !== '' && reason.trim().length >= 3;
+  const reasonFault = reason.trim().length < 3 ? words.reasonMissing : undefined;
   return (
     <Dialog
       isOpen
@@ -48,7 +48,7 @@ function AskDialog(props: { request: RequestDto; onClose: () => void }) {
       confirmLabel={words.askDeviation}
       kind="primary"
       busy={ask.isPending}
-      why={isReady ? undefined : words.reasonMissing}
+      why={code === '' ? words.ruleMissing : reasonFault}
       error={errorText(ask.error)}
       onConfirm={() => {
         if (code !== '') {
@@ -61,13 +61,13 @@ function AskDialog(props: { request: RequestDto; onClose: () => void }) {
       <Field label={words.rule} layout="above">
         <Select
           value={code}
-          options={liftable.map((value) => ({ value, label: checkRules[value].title }))}
+          options={liftableCodes.map((value) => ({ value, label: checkRules[value].title }))}
           onChange={(event) => {
-            setCode(liftable.find((each) => each === event.target.value) ?? '');
+            setCode(liftableCodes.find((each) => each === event.target.value) ?? '');
           }}
         />
       </Field>
-      <Field label={words.reason} layout="above">
+      <Field label={words.reason} layout="above" help={words.reasonHelp}>
         <TextArea
           value={reason}
           onChange={(event) => {
@@ -102,7 +102,17 @@ function DecideDialog(props: {
       },
     });
   };
-  const why = reason.trim().length < 3 ? words.reasonMissing : undefined;
+  const timeFault =
+    reading.kind === 'gap'
+      ? t.ui.timeGap(site.zone)
+      : reading.kind === 'invalid'
+        ? t.ui.timeInvalid
+        : undefined;
+  const refuseWhy = reason.trim().length < 3 ? words.reasonMissing : undefined;
+  const isUnagreed = props.isReported && acceptance.trim() === '';
+  const grantWhy =
+    refuseWhy ??
+    (isUnagreed ? words.acceptanceMissing : timeFault === undefined ? undefined : words.timeWrong);
   return (
     <Dialog
       isOpen
@@ -110,7 +120,7 @@ function DecideDialog(props: {
       confirmLabel={words.grant}
       kind="primary"
       busy={decide.isPending}
-      why={why}
+      why={grantWhy}
       error={errorText(decide.error)}
       onConfirm={() => {
         send(true);
@@ -140,7 +150,13 @@ function DecideDialog(props: {
           }}
         />
       </Field>
-      <Field label={words.expires} layout="above" help={words.expiresHelp} optional>
+      <Field
+        label={words.expires}
+        layout="above"
+        help={words.expiresHelp(site.zone)}
+        error={timeFault}
+        optional
+      >
         <DateTimeInput
           value={expires}
           onChange={(event) => {
@@ -152,7 +168,7 @@ function DecideDialog(props: {
         <Button
           kind="danger"
           busy={decide.isPending}
-          why={why}
+          why={refuseWhy}
           onClick={() => {
             send(false);
           }}
@@ -222,34 +238,43 @@ function DeviationTable(props: {
 }
 
 /** Rules lifted for this request: asked, answered, over. */
-export function DeviationsSection(props: { request: RequestDto }) {
-  const { request } = props;
+export function DeviationsSection(props: {
+  request: RequestDto;
+  /** The rule somebody is asking about, here or at a slot that it blocks. */
+  asking: CheckCode | 'any' | null;
+  onAsk: ((rule: 'any') => void) | undefined;
+  onClose: () => void;
+}) {
+  const { request, asking, onAsk } = props;
   const site = useSite();
-  const may = useMay();
   const query = useQuery(deviationsQuery(site.code, request.id));
-  const [asked, setAsked] = useState<'ask' | DeviationDto | null>(null);
-  const close = () => {
-    setAsked(null);
-  };
-  const isOpen = request.state !== 'done' && request.state !== 'withdrawn';
+  const [deciding, setDeciding] = useState<DeviationDto | null>(null);
   return (
     <Section title={words.deviations} note={<p>{words.deviationsNote}</p>}>
-      <DeviationTable rows={query.data?.items ?? []} query={query} onDecide={setAsked} />
-      {isOpen && may('request.edit', { ownerId: request.requester.id }) ? (
+      <DeviationTable rows={query.data?.items ?? []} query={query} onDecide={setDeciding} />
+      {onAsk === undefined ? null : (
         <div className="mp-acts mt-3">
           <Button
             kind="link"
             onClick={() => {
-              setAsked('ask');
+              onAsk('any');
             }}
           >
             {words.askDeviation}
           </Button>
         </div>
-      ) : null}
-      {asked === 'ask' ? <AskDialog request={request} onClose={close} /> : null}
-      {asked === null || asked === 'ask' ? null : (
-        <DecideDialog deviation={asked} isReported={request.grade === 'reported'} onClose={close} />
+      )}
+      {asking === null ? null : (
+        <AskDialog request={request} rule={asking} onClose={props.onClose} />
+      )}
+      {deciding === null ? null : (
+        <DecideDialog
+          deviation={deciding}
+          isReported={request.grade === 'reported'}
+          onClose={() => {
+            setDeciding(null);
+          }}
+        />
       )}
     </Section>
   );

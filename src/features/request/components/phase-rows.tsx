@@ -23,7 +23,6 @@ export function PhaseRows(props: {
       caption={words.estimate}
       rows={estimate.phases}
       rowKey={(row) => row.phase}
-      stack
       foot={[
         words.slot,
         formatHours(estimate.likelyTotalS),

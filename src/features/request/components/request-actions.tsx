@@ -12,8 +12,8 @@ import { Field } from '#src/components/ui/field.tsx';
 import { TextArea } from '#src/components/ui/input.tsx';
 import { useApiMutation } from '#src/hooks/use-api-mutation.ts';
 import { useMay, useSite } from '#src/hooks/use-site.ts';
-import { errorText } from '#src/lib/error-text.ts';
 import { t } from '#src/texts/t.ts';
+import { refusalText } from '../refusal.view.ts';
 import { requestReaders } from '../refreshes.ts';
 
 const words = t.request;
@@ -29,7 +29,7 @@ function useActs(request: RequestDto, onDone: () => void) {
   const { version } = request;
   return {
     isBusy: submit.isPending || withdraw.isPending || decline.isPending,
-    error: errorText(submit.error ?? withdraw.error ?? decline.error),
+    error: refusalText(submit.error ?? withdraw.error ?? decline.error),
     reset: () => {
       submit.reset();
       withdraw.reset();
