@@ -23,6 +23,8 @@ export default defineConfig({
             'tests/client/**/*.test.{ts,tsx}',
           ],
           environment: 'node',
+          // Property tests take long on a machine that does other work at the same time.
+          testTimeout: 60_000,
         },
       },
       {

@@ -1,7 +1,15 @@
 import { and, eq } from 'drizzle-orm';
 import type { Tx } from '#server/db/client.ts';
 import { idempotencyKeysTable } from '#server/db/tables/idempotency-key.table.ts';
-import type { Answer, KeyedCall } from './idempotency.ts';
+
+export type KeyedCall = {
+  readonly personId: number;
+  readonly key: string;
+  readonly contract: string;
+  readonly requestHash: string;
+  readonly at: Date;
+};
+export type Answer = { readonly status: number; readonly body: unknown };
 
 /** False where the key is taken; waits for another transaction that is just taking it. */
 export async function claimKey(tx: Tx, call: KeyedCall): Promise<boolean> {

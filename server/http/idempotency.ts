@@ -4,18 +4,10 @@ import { problem } from '#server/problem.ts';
 import type { Contract } from '#shared/contracts/define-contract.ts';
 import type { Tx } from '#server/db/client.ts';
 import { claimKey, findAnswer, storeAnswer } from './idempotency.repository.ts';
+import type { Answer, KeyedCall } from './idempotency.repository.ts';
 import type { RawInput } from './raw-input.ts';
 
 const keySchema = z.uuid();
-
-export type KeyedCall = {
-  readonly personId: number;
-  readonly key: string;
-  readonly contract: string;
-  readonly requestHash: string;
-  readonly at: Date;
-};
-export type Answer = { readonly status: number; readonly body: unknown };
 
 /** Reads the key of a creating call; without one a repeat could not be told from a second wish. */
 export function requireKey(given: string | undefined): string {

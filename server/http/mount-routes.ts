@@ -7,7 +7,7 @@ import { authorise, isSiteScoped } from './authorise.ts';
 import { checkResponse } from './check-response.ts';
 import type { OpenCall, Route } from './define-route.ts';
 import { answerOnce, hashRequest, requireKey } from './idempotency.ts';
-import type { Answer } from './idempotency.ts';
+import type { Answer } from './idempotency.repository.ts';
 import { scopeOf } from './request-scope.ts';
 import { sendAnswer } from './send-answer.ts';
 

@@ -2,7 +2,7 @@ import type { Request, Response } from 'express';
 import type { Contract } from '#shared/contracts/define-contract.ts';
 import { fileContentSchema } from '#shared/contracts/files.contract.ts';
 import type { FileContent } from '#shared/contracts/files.contract.ts';
-import type { Answer } from './idempotency.ts';
+import type { Answer } from './idempotency.repository.ts';
 
 /** Answers about people's work are never kept by caches on the way. */
 export function sendAnswer(

@@ -1,3 +1,4 @@
+import { checkRules } from '#shared/domain/checks/check-rules.ts';
 import type { CheckResultDto } from '#shared/contracts/check.schemas.ts';
 import type { SlipLine } from '#src/components/ui/slip.tsx';
 import { t } from '#src/texts/t.ts';
@@ -17,7 +18,7 @@ export function slipLines(checks: readonly CheckResultDto[]): readonly SlipLine[
     ...told.map((check): SlipLine => ({
       key: check.code,
       kind: check.outcome,
-      title: t.bookings.rules[check.code],
+      title: `${checkRules[check.code].title}.`,
       text: check.sentence,
       ways:
         check.waysOut.length === 0 ? undefined : check.waysOut.map((way) => way.sentence).join(' '),

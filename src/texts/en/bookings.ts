@@ -1,33 +1,3 @@
-import type { CheckCode } from '#shared/domain/checks/types.ts';
-
-const rules: Record<CheckCode, string> = {
-  'double-use': 'Double use',
-  'position-fit': 'Position fits',
-  'path-connects': 'Path connects',
-  'in-service': 'In service',
-  'calibration-valid': 'In calibration',
-  'meter-range': 'Meter range',
-  'source-span': 'Source span',
-  'source-stability': 'Source stability',
-  'burden-known': 'Burden known',
-  'chamber-span': 'Chamber span',
-  'shared-temperature': 'Shared temperature',
-  'still-phase': 'Still phases',
-  'load-open': 'Load open',
-  'stability-logged': 'Stability logged',
-  'temperature-current': 'Temperature current',
-  mapping: 'Mapping',
-  'cell-limits': 'Cell limits',
-  'hazard-protection': 'Hazard protection',
-  'energy-and-count': 'Energy and count',
-  unattended: 'Unattended hold',
-  'cells-received': 'Cells received',
-  'rest-time': 'Rest time',
-  'working-hours': 'Working hours',
-  'slot-length': 'Slot length',
-  'needed-by': 'Needed by',
-};
-
 export const bookings = {
   title: 'Bookings',
   intro:
@@ -113,7 +83,6 @@ export const bookings = {
   noChecks: 'No checks are kept for this booking.',
   checkColumns: { rule: 'Rule', result: 'Result', what: 'What was found' },
   outcomes: { pass: 'pass', caution: 'caution', stop: 'stop' },
-  rules,
   lifted: (id: number) => `lifted by deviation ${id}`,
   evidence: 'Evidence',
   deviations: 'Deviations',

@@ -210,12 +210,23 @@ describe('loads', () => {
   });
 
   it('under the strict rule the next load starts as the door opens, under the tolerant one beside it', () => {
-    const strict = firstOffer(booked(true, 'closed'));
+    const longer = { tolerance: { kind: 'relative', fraction: 0.05 } } as const;
+    const strict = firstOffer(booked(true, 'closed'), longer);
     const end = booked(true).chambers[0]?.loads[0]?.phases.at(-1);
     expect(strict.joinsLoadId).toBeNull();
     expect(iso(strict.startMs)).toBe(iso(end?.startMs));
     const tolerant = firstOffer(booked(false, 'closed'));
     expect(iso(tolerant.startMs)).toBe('2026-06-01T07:00:00.000Z');
+  });
+
+  it('under the strict rule too a load may stand beside another whose doors it shares at both ends', () => {
+    const facility = booked(true, 'closed');
+    const beside = firstOffer(facility);
+    const load = facility.chambers[0]?.loads[0];
+    expect(beside.joinsLoadId).toBeNull();
+    // The door is open for the first load until then; from there on nothing opens before both end.
+    expect(iso(beside.phases[0]?.endMs)).toBe(iso(load?.phases[0]?.endMs));
+    expect(iso(beside.phases.at(-1)?.startMs)).toBe(iso(load?.phases.at(-1)?.startMs));
   });
 
   it('a closed load that could be joined is the blocked earlier slot', () => {

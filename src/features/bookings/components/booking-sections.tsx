@@ -1,4 +1,5 @@
 import type { BookingDto } from '#shared/contracts/bookings.contract.ts';
+import { checkRules } from '#shared/domain/checks/check-rules.ts';
 import type { CheckResultDto, PhaseSpanDto } from '#shared/contracts/check.schemas.ts';
 import { barPhases } from '#src/components/drawing/booking-bar.view.ts';
 import { PhaseFigure } from '#src/components/drawing/phase-figure.tsx';
@@ -190,7 +191,12 @@ export function ChecksSection(props: { booking: BookingDto }) {
               </State>
             ),
           },
-          { key: 'rule', head: columns.rule, nowrap: true, cell: (row) => words.rules[row.code] },
+          {
+            key: 'rule',
+            head: columns.rule,
+            nowrap: true,
+            cell: (row) => checkRules[row.code].title,
+          },
           { key: 'what', head: columns.what, cell: (row) => <Found check={row} /> },
         ]}
       />

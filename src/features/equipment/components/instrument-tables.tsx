@@ -10,8 +10,10 @@ import { formatDay, formatInstant } from '#src/lib/format-date.ts';
 import { formatNumber } from '#src/lib/format-number.ts';
 import { formatTemperature } from '#src/lib/format-quantity.ts';
 import { t } from '#src/texts/t.ts';
+import { groupScopes } from '../scope-groups.view.ts';
 
 /** Calibration state of each channel, function and range. */
+/** What it is calibrated for, a row per range and state. */
 export function ScopesSection(props: { instrument: InstrumentDto }) {
   const site = useSite();
   const words = t.equipment;
@@ -19,35 +21,35 @@ export function ScopesSection(props: { instrument: InstrumentDto }) {
     <Section title={words.scopes} note={<p>{words.scopesNote}</p>}>
       <Table
         caption={words.scopes}
-        rows={props.instrument.scopes}
-        rowKey={(row) => `${row.channelLabel}-${row.function}-${row.rangeLabel}`}
+        rows={groupScopes(props.instrument.scopes)}
+        rowKey={(row) => row.key}
         empty={words.noScopes}
         columns={[
           {
             key: 'channel',
             head: words.scopeColumns.channel,
             mono: true,
-            cell: (row) => row.channelLabel ?? words.wholeInstrument,
+            cell: (row) => row.channels ?? words.wholeInstrument,
           },
           {
             key: 'function',
             head: words.scopeColumns.function,
-            cell: (row) => words.functions[row.function],
+            cell: ({ scope }) => words.functions[scope.function],
           },
           {
             key: 'range',
             head: words.scopeColumns.range,
             mono: true,
-            cell: (row) => row.rangeLabel ?? words.allRanges,
+            cell: ({ scope }) => scope.rangeLabel ?? words.allRanges,
           },
           {
             key: 'state',
             head: words.scopeColumns.state,
-            cell: (row) => (
+            cell: ({ scope }) => (
               <>
-                <CalibrationState badge={row.badge} />
-                {row.limitation === null ? null : (
-                  <span className="mp-note block">{words.limitedTo(row.limitation)}</span>
+                <CalibrationState badge={scope.badge} />
+                {scope.limitation === null ? null : (
+                  <span className="mp-note block">{words.limitedTo(scope.limitation)}</span>
                 )}
               </>
             ),
@@ -56,18 +58,18 @@ export function ScopesSection(props: { instrument: InstrumentDto }) {
             key: 'due',
             head: words.scopeColumns.due,
             mono: true,
-            cell: (row) => (row.dueOn === null ? words.noDue : formatDay(row.dueOn)),
+            cell: ({ scope }) => (scope.dueOn === null ? words.noDue : formatDay(scope.dueOn)),
           },
           {
             key: 'calibration',
             head: words.scopeColumns.calibration,
             align: 'right',
-            cell: (row) =>
-              row.calibrationId === null ? (
+            cell: ({ scope }) =>
+              scope.calibrationId === null ? (
                 ''
               ) : (
-                <Link to={paths.calibration.href(site.code, row.calibrationId)}>
-                  {words.record(row.calibrationId)}
+                <Link to={paths.calibration.href(site.code, scope.calibrationId)}>
+                  {words.record(scope.calibrationId)}
                 </Link>
               ),
           },
