@@ -1,4 +1,4 @@
-import { and, asc, eq, isNull, sql } from 'drizzle-orm';
+import { and, asc, eq, notInArray, sql } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/pg-core';
 import type { Reader, Tx } from '#server/db/client.ts';
 import { deviationsTable } from '#server/db/tables/check-result.table.ts';
@@ -19,6 +19,7 @@ function deviationRows(reader: Reader) {
       siteId: requestsTable.siteId,
       grade: requestsTable.grade,
       requesterId: requestsTable.requesterId,
+      requestState: requestsTable.state,
       projectId: requestsTable.projectId,
     })
     .from(d)
@@ -45,10 +46,16 @@ export async function lockDeviation(tx: Tx, siteId: number, id: number) {
   return row;
 }
 
-/** Those that wait for a decision at a site, oldest first. */
+/** Those that wait for a decision at a site, oldest first; of a request that is over none does. */
 export async function listAsked(reader: Reader, siteId: number) {
   return deviationRows(reader)
-    .where(and(eq(requestsTable.siteId, siteId), eq(d.state, 'asked'), isNull(d.decidedAt)))
+    .where(
+      and(
+        eq(requestsTable.siteId, siteId),
+        eq(d.state, 'asked'),
+        notInArray(requestsTable.state, ['done', 'withdrawn']),
+      ),
+    )
     .orderBy(asc(d.requestedAt), asc(d.id));
 }
 

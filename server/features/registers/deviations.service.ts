@@ -15,6 +15,7 @@ import type {
 import { checkRules } from '#shared/domain/checks/check-rules.ts';
 import type { CheckCode } from '#shared/domain/checks/types.ts';
 import { may } from '#shared/domain/policies/may.ts';
+import type { RequestState } from '#shared/domain/states.ts';
 import {
   findRequestOf,
   insertDeviation,
@@ -41,9 +42,7 @@ export async function listDeviations(
 /** Those that wait for a decision, for who may give it. */
 export async function listWaitingDeviations(reader: Reader, site: SiteScope, actor: SignedIn) {
   const rows = await listAsked(reader, site.id);
-  return rows.filter(({ deviation }) =>
-    may(actor, 'deviation.grant', site.code, { authorId: deviation.requestedById }),
-  );
+  return rows.filter((row) => mayDecide(actor, site, row));
 }
 
 /** Asks that a rule be lifted for one request; what nobody may lift is refused at once. */
@@ -58,11 +57,7 @@ export async function askDeviation(
     if (!may(actor, 'request.edit', site.code, { ownerId: request.requesterId })) {
       throw refused('Only the person who asked for the slot can ask for a deviation. Ask them.');
     }
-    if (request.state === 'done' || request.state === 'withdrawn') {
-      throw problem('request.state', {
-        detail: `Request ${id} is ${request.state}: there is nothing left to lift a rule for.`,
-      });
-    }
+    requireOpen(id, request.state);
     const rule = checkRules[wish.code];
     if (rule.isNeverLifted) {
       throw problem('deviation.not-liftable', {
@@ -121,6 +116,7 @@ export async function decideDeviation(
         detail: `Deviation ${id} is decided already by ${row.decidedBy ?? 'somebody'}. Reload the page to see how.`,
       });
     }
+    requireOpen(row.deviation.requestId, row.requestState);
     const now = deps.clock.now();
     requireSense(wish, row, now);
     const state = wish.grant ? 'granted' : 'refused';
@@ -151,6 +147,21 @@ export async function decideDeviation(
   });
 }
 
+function mayDecide(actor: SignedIn, site: SiteScope, row: DeviationRecord): boolean {
+  return (
+    row.requesterId !== actor.personId &&
+    may(actor, 'deviation.grant', site.code, { authorId: row.deviation.requestedById })
+  );
+}
+
+function requireOpen(requestId: number | null, state: RequestState): void {
+  if (state === 'done' || state === 'withdrawn') {
+    throw problem('request.state', {
+      detail: `Request ${requestId ?? ''} is ${state}: there is nothing left to lift a rule for.`,
+    });
+  }
+}
+
 /** The request comes first in the order of locks that everybody keeps. */
 async function lockRequestOf(tx: Tx, site: SiteScope, deviationId: number): Promise<void> {
   const requestId = await findRequestOf(tx, deviationId);
@@ -160,10 +171,7 @@ async function lockRequestOf(tx: Tx, site: SiteScope, deviationId: number): Prom
 }
 
 function requireOther(actor: SignedIn, site: SiteScope, row: DeviationRecord): void {
-  const isOther =
-    row.requesterId !== actor.personId &&
-    may(actor, 'deviation.grant', site.code, { authorId: row.deviation.requestedById });
-  if (!isOther) {
+  if (!mayDecide(actor, site, row)) {
     throw problem('deviation.same-person', {
       detail: 'You asked for this yourself. Another metrologist or a manager must decide.',
     });

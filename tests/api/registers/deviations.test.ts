@@ -278,6 +278,17 @@ test('indicative work needs no word of the customer', async () => {
 });
 
 test('for a request that is over there is nothing to lift', async () => {
+  const gone = await bench.request(notRested);
+  const asked = await ask(gone);
+  await bench.app.db
+    .update(requestsTable)
+    .set({ state: 'withdrawn' })
+    .where(eq(requestsTable.id, gone.requestId));
+  const late = await bench.app.callRefused(decideDeviation, metrologist, {
+    params: { id: asked.id },
+    body: grant,
+  });
+  expect([late.status, late.problem.code]).toEqual([409, 'request.state']);
   for (const state of ['done', 'withdrawn'] as const) {
     const made = await bench.request({ request: { state } });
     const { status, problem } = await bench.app.callRefused(askDeviation, bench.engineer, {
