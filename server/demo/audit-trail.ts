@@ -9,6 +9,7 @@ type Event = Omit<RowOf<typeof auditEventsTable>, 'id'>;
 /** Who did what, in the order it was done; unsealed, as every trail is at first. */
 export function layAuditTrail(context: DemoContext, people: People): void {
   const events = [
+    ...policyEvents(context),
     ...requestEvents(context),
     ...bookingEvents(context, people),
     ...calibrationEvents(context),
@@ -23,6 +24,18 @@ export function layAuditTrail(context: DemoContext, people: People): void {
 
 function siteOfInstrument(context: DemoContext): ReadonlyMap<number, number> {
   return new Map(context.rows.instruments.map((row) => [row.id ?? 0, row.siteId]));
+}
+
+function policyEvents({ rows }: DemoContext): Event[] {
+  return rows.settings.map((row) => ({
+    actorId: row.changedById ?? null,
+    siteId: row.siteId ?? null,
+    at: row.createdAt,
+    action: 'policy.edit',
+    subjectKind: 'policy',
+    subjectId: row.id ?? null,
+    after: { key: row.key, value: row.value },
+  }));
 }
 
 function requestEvents({ rows }: DemoContext): Event[] {

@@ -14,6 +14,7 @@ import { layOpenRequests, type WishedRequests } from './open-requests.ts';
 import { layOutages } from './outages.ts';
 import { layPeople } from './people.ts';
 import { planLoads } from './plan-loads.ts';
+import { layPolicies } from './policies.ts';
 import { layProjects } from './projects.ts';
 import { addSecondLot } from './second-lot.ts';
 import { laySites } from './sites.ts';
@@ -37,6 +38,7 @@ export function buildDemo(input: { readonly seed: number; readonly nowMs: number
   const context = createContext(input);
   const sites = laySites(context);
   const people = layPeople(context, { larkfen: sites.larkfen.id, otterholm: sites.otterholm.id });
+  layPolicies(context, sites, people);
   const projects = layProjects(context, people);
   const types = layCellTypes(context, people);
   const register = openRegister(context, sites, people);

@@ -35,6 +35,7 @@ import type {
   requestsTable,
 } from '#server/db/tables/request.table.ts';
 import type { runEventsTable, runsTable } from '#server/db/tables/run.table.ts';
+import type { settingsTable } from '#server/db/tables/setting.table.ts';
 import type {
   roomsTable,
   siteCalendarExceptionsTable,
@@ -60,6 +61,7 @@ export type DemoRows = {
   readonly rooms: RowOf<typeof roomsTable>[];
   readonly persons: RowOf<typeof personsTable>[];
   readonly grants: RowOf<typeof grantsTable>[];
+  readonly settings: RowOf<typeof settingsTable>[];
   readonly projects: RowOf<typeof projectsTable>[];
   readonly projectMembers: RowOf<typeof projectMembersTable>[];
   readonly instruments: RowOf<typeof instrumentsTable>[];
@@ -106,6 +108,7 @@ export function emptyRows(): DemoRows {
     rooms: [],
     persons: [],
     grants: [],
+    settings: [],
     projects: [],
     projectMembers: [],
     instruments: [],

@@ -35,6 +35,7 @@ import {
   requestsTable,
 } from '#server/db/tables/request.table.ts';
 import { runEventsTable, runsTable } from '#server/db/tables/run.table.ts';
+import { settingsTable } from '#server/db/tables/setting.table.ts';
 import {
   roomsTable,
   siteCalendarExceptionsTable,
@@ -61,6 +62,7 @@ export async function writeDemo(tx: Tx, rows: DemoRows): Promise<void> {
   await insert(roomsTable, rows.rooms);
   await insert(personsTable, rows.persons);
   await insert(grantsTable, rows.grants);
+  await insert(settingsTable, rows.settings);
   await insert(projectsTable, rows.projects);
   await insert(projectMembersTable, rows.projectMembers);
   await insert(instrumentsTable, rows.instruments);
