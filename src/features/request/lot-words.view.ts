@@ -12,6 +12,19 @@ export function lotIsOpen(
   return request.state !== 'withdrawn' && request.state !== 'done' && lot.bookingId === null;
 }
 
+/** Whether enough is known of it to look for slots. */
+export function lotIsSearched(
+  request: Pick<RequestDto, 'state' | 'setTemperatureC'>,
+  lot: Pick<LotDto, 'bookingId' | 'cellTypeId' | 'cellCount'>,
+): boolean {
+  return (
+    lotIsOpen(request, lot) &&
+    lot.cellTypeId !== null &&
+    lot.cellCount !== null &&
+    request.setTemperatureC !== null
+  );
+}
+
 /** `2 × NP35` and `, 50 % charge, rested since …, stored at 22.0 °C.` */
 export function lotWords(lot: LotDto): {
   readonly what: string;

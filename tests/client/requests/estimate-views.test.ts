@@ -6,6 +6,7 @@ import { estimateSentence, estimatesSentence } from '#src/features/request/estim
 import { figureText } from '#src/features/request/figure-text.view.ts';
 import { reasonOf, type KnownEstimate } from '#src/features/request/phase-reasons.view.ts';
 import { nameStarts } from '#src/features/request/settling-labels.view.ts';
+import { estimateToShow } from '#src/features/request/shown-estimate.view.ts';
 import { shorterWays } from '#src/features/request/shorter.view.ts';
 
 const plain = (text: string) => text.replaceAll('\u202f', ' ');
@@ -159,6 +160,31 @@ describe('an estimate read out', () => {
     const needs = { kind: 'needs', needs: ['cellCount'] } as const;
     expect(estimatesSentence([needs, needs])).toMatch(/^Lot 1: .* Lot 2: /);
     expect(estimatesSentence([needs])).not.toContain('Lot');
+  });
+});
+
+describe('the estimate of a saved lot', () => {
+  const input = inputOf();
+  const reference = { kind: 'estimate', input, estimate: estimateSlot(input) } as const;
+
+  test('is the one over the real path as soon as a slot is found', () => {
+    const real = estimateSlot(inputOf({ wiring: { ...input.wiring, leadResistanceOhm: 0.004 } }));
+    if (real.outcome !== 'ok') {
+      throw new Error('The example has no lengths.');
+    }
+    const estimate = { ...real, figures: [], notes: [], phases: [...real.phases] };
+    const shown = estimateToShow({ estimate, chamberTag: 'C08' }, reference);
+    expect(shown.kind === 'estimate' ? shown.estimate : null).toBe(estimate);
+    expect(shown.kind === 'estimate' ? shown.over : '').toContain('C08');
+  });
+
+  test('is the one over the reference wiring before, and says so', () => {
+    const shown = estimateToShow(undefined, reference);
+    expect(shown.kind === 'estimate' ? shown.over : '').toContain('reference wiring of Larkfen');
+    expect(estimateToShow(undefined, { kind: 'needs', needs: ['temperature'] })).toEqual({
+      kind: 'needs',
+      sentence: 'Give a set temperature and the estimate appears here.',
+    });
   });
 });
 

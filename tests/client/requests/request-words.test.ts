@@ -1,7 +1,7 @@
 import { describe, expect, test } from 'vitest';
 import type { CellTypeDto } from '#shared/contracts/registers.contract.ts';
 import { cautionsOf } from '#src/features/request/cautions.view.ts';
-import { lotIsOpen, lotWords } from '#src/features/request/lot-words.view.ts';
+import { lotIsOpen, lotIsSearched, lotWords } from '#src/features/request/lot-words.view.ts';
 import { aimText, temperatureText } from '#src/features/request/request-facts.view.ts';
 
 const plain = (text: string) => text.replaceAll('\u202f', ' ');
@@ -64,6 +64,15 @@ describe('a lot in words', () => {
     expect(lotIsOpen({ state: 'partly-booked' }, { bookingId: 2418 })).toBe(false);
     expect(lotIsOpen({ state: 'withdrawn' }, lot)).toBe(false);
     expect(lotIsOpen({ state: 'done' }, lot)).toBe(false);
+  });
+
+  test('is looked for once type, number and temperature are known', () => {
+    const request = { state: 'draft', setTemperatureC: 45 } as const;
+    expect(lotIsSearched(request, lot)).toBe(true);
+    expect(lotIsSearched({ ...request, setTemperatureC: null }, lot)).toBe(false);
+    expect(lotIsSearched(request, { ...lot, cellCount: null })).toBe(false);
+    expect(lotIsSearched(request, { ...lot, cellTypeId: null })).toBe(false);
+    expect(lotIsSearched(request, { ...lot, bookingId: 2418 })).toBe(false);
   });
 });
 

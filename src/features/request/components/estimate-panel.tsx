@@ -66,10 +66,11 @@ function Trouble(props: { estimate: ShownEstimate }) {
 /** Likely and safe length, what decides it, and the slot as a drawing. */
 export function EstimateHead(props: {
   estimate: ShownEstimate;
-  input?: EstimateInput | undefined;
   safePct: number;
+  /** Over which wiring it was worked out. */
+  over?: string | undefined;
 }) {
-  const { estimate, input } = props;
+  const { estimate, over } = props;
   return (
     <>
       {isKnown(estimate) ? (
@@ -97,9 +98,7 @@ export function EstimateHead(props: {
           )}
         />
       ) : null}
-      {input === undefined ? null : (
-        <p className="mp-note mt-2">{words.overWiring(input.wiring.label)}</p>
-      )}
+      {over === undefined ? null : <p className="mp-note mt-2">{over}</p>}
     </>
   );
 }
@@ -180,7 +179,11 @@ export function EstimateDetail(props: EstimateProps) {
 export function EstimatePanel(props: EstimateProps & { safePct: number }) {
   return (
     <div>
-      <EstimateHead estimate={props.estimate} input={props.input} safePct={props.safePct} />
+      <EstimateHead
+        estimate={props.estimate}
+        safePct={props.safePct}
+        over={props.input === undefined ? undefined : words.overWiring(props.input.wiring.label)}
+      />
       <EstimateDetail
         estimate={props.estimate}
         input={props.input}

@@ -5,7 +5,6 @@ import type { RequestDto } from '#shared/contracts/requests.contract.ts';
 import type { CheckCode } from '#shared/domain/checks/types.ts';
 import { Section } from '#src/components/layout/page.tsx';
 import { Button } from '#src/components/ui/button.tsx';
-import { Disclosure } from '#src/components/ui/disclosure.tsx';
 import { ErrorState, Loading } from '#src/components/ui/feedback.tsx';
 import { Notice } from '#src/components/ui/notice.tsx';
 import { useNow } from '#src/hooks/use-now.ts';
@@ -13,7 +12,6 @@ import { useMay } from '#src/hooks/use-site.ts';
 import { tableError } from '#src/lib/table-error.ts';
 import { t } from '#src/texts/t.ts';
 import { isExpired, offerRows, shownAtFirst, slotAct } from '../offers.view.ts';
-import { EstimateDetail } from './estimate-panel.tsx';
 import { OffersTable } from './offers-table.tsx';
 import { SlotDialog, type Taking } from './slot-dialog.tsx';
 
@@ -56,7 +54,6 @@ function Found(props: FoundProps) {
     mayConfirm: found.mayConfirm,
     mayPropose: may('request.propose', { ownerId: request.requester.id }),
   });
-  const best = found.offers[0]?.estimate;
   const rows = offerRows(found, count, request);
   return (
     <>
@@ -98,13 +95,6 @@ function Found(props: FoundProps) {
         </Button>
         {props.isSearching ? <span className="mp-note">{words.searching}</span> : null}
       </div>
-      {best === undefined ? null : (
-        <div className="mt-4">
-          <Disclosure summary={words.bestEstimate}>
-            <EstimateDetail estimate={best} />
-          </Disclosure>
-        </div>
-      )}
       {taking === null ? null : (
         <SlotDialog
           request={request}

@@ -36,7 +36,7 @@ function Know(props: Pick<OffersTableProps, 'requestId' | 'onAskDeviation'> & { 
   const { blockedBy, offer, isWished } = props.row;
   const site = useSite();
   return (
-    <>
+    <div className="min-w-0">
       {blockedBy === null ? (
         <>
           {isWished ? <b>{words.proposedHere} </b> : null}
@@ -66,7 +66,7 @@ function Know(props: Pick<OffersTableProps, 'requestId' | 'onAskDeviation'> & { 
       <Disclosure summary={words.checks}>
         <OfferSlip offer={offer} />
       </Disclosure>
-    </>
+    </div>
   );
 }
 
@@ -82,10 +82,10 @@ function Phases(props: { offer: OfferDto }) {
   const { offer } = props;
   const seconds = (Date.parse(offer.endAt) - Date.parse(offer.startAt)) / 1000;
   return (
-    <>
-      <span className="font-mono whitespace-nowrap">{formatHours(seconds)}</span>
+    <div>
+      <span className="block font-mono whitespace-nowrap">{formatHours(seconds)}</span>
       <PhaseBar phases={barPhases(offer.phases, likelyHoldEnd(offer))} width={barWidth} />
-    </>
+    </div>
   );
 }
 
@@ -93,13 +93,14 @@ function Place(props: { offer: OfferDto }) {
   const { offer } = props;
   const { positions, sources, meters } = describePaths(offer.paths);
   return (
-    <>
-      <span className="font-mono">{positions}</span>{' '}
-      <span className="mp-note">{formatTemperature(offer.setTemperatureC)}</span>
-      <span className="mp-note block font-mono">
-        {sources} · {meters}
+    <div>
+      <span className="whitespace-nowrap">
+        <span className="font-mono">{positions}</span>{' '}
+        <span className="mp-note">{formatTemperature(offer.setTemperatureC)}</span>
       </span>
-    </>
+      <span className="mp-note block font-mono">{sources}</span>
+      <span className="mp-note block font-mono">{meters}</span>
+    </div>
   );
 }
 
@@ -121,6 +122,20 @@ function TakeButton(props: OffersTableProps & { row: OfferRow }) {
   );
 }
 
+/** Its place in order, or the stop mark, before the time at which loading starts. */
+function Start(props: { row: OfferRow }) {
+  const { place, offer } = props.row;
+  const time = useTime();
+  return (
+    <span className="flex items-baseline gap-2 whitespace-nowrap">
+      <span className="w-[18px] flex-none">
+        {place === null ? <Mark name="stop" tone="brick" /> : <b>{place}</b>}
+      </span>
+      <b className="font-mono">{time(offer.startAt)}</b>
+    </span>
+  );
+}
+
 /** Slots as rows: when, how the time is spent, where, what to know, and one act. */
 export function OffersTable(props: OffersTableProps) {
   const time = useTime();
@@ -134,18 +149,9 @@ export function OffersTable(props: OffersTableProps) {
       stack
       columns={[
         {
-          key: 'place',
-          head: '',
-          label: words.place,
-          width: 26,
-          cell: (row) =>
-            row.place === null ? <Mark name="stop" tone="brick" /> : <b>{row.place}</b>,
-        },
-        {
           key: 'start',
           head: heads.start,
-          mono: true,
-          cell: (row) => <b>{time(row.offer.startAt)}</b>,
+          cell: (row) => <Start row={row} />,
         },
         { key: 'end', head: heads.end, mono: true, cell: (row) => time(row.offer.endAt) },
         { key: 'phases', head: heads.length, cell: (row) => <Phases offer={row.offer} /> },
@@ -169,6 +175,7 @@ export function OffersTable(props: OffersTableProps) {
           head: '',
           label: words.actions,
           align: 'right',
+          nowrap: true,
           cell: (row) => <TakeButton {...props} row={row} />,
         },
       ]}
