@@ -263,6 +263,10 @@ test('withdrawing is for who asked, declining for schedulers; both give a reason
     bench.app.callRefused(declineRequest, bench.scheduler, { ...call, body: { version: 1 } }),
   ]);
   expect(refusals.map(({ status }) => status)).toEqual([403, 404, 403, 404, 409, 409, 422, 422]);
+  expect(refusals.slice(4, 6).map(({ problem }) => problem.code)).toEqual([
+    'version.stale',
+    'version.stale',
+  ]);
   expect(refusals.slice(6).map(({ problem }) => problem.errors?.[0]?.pointer)).toEqual([
     '#/reason',
     '#/reason',
