@@ -200,6 +200,7 @@ export const request = {
     withdrawn: 'It was taken back.',
   },
   declined: 'Sent back.',
+  withdrawn: 'Taken back.',
   facts: {
     requester: 'Asked by',
     project: 'Project',

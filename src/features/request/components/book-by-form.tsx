@@ -16,7 +16,7 @@ import { chambersQuery } from '../api/request-queries.ts';
 import { countStops } from '../check-lines.view.ts';
 import { refusalText } from '../refusal.view.ts';
 import { OfferSlip } from './offer-slip.tsx';
-import { SlotDialog, type Taking } from './slot-dialog.tsx';
+import type { Taking } from './slot-dialog.tsx';
 
 const words = t.request;
 
@@ -109,11 +109,14 @@ function whyUncheckable(place: Place): string | undefined {
 }
 
 /** Books a lot at a chamber and start of one's own choice, after every check was seen. */
-export function BookByForm(props: { request: RequestDto; lotId: number }) {
+export function BookByForm(props: {
+  request: RequestDto;
+  lotId: number;
+  onTake: (taking: Taking) => void;
+}) {
   const { request, lotId } = props;
   const site = useSite();
   const place = usePlace();
-  const [taking, setTaking] = useState<Taking | null>(null);
   const check = useApiMutation(checkPlacement);
   const answer = place.isCurrent ? check.data : undefined;
   const offer = answer?.offer ?? null;
@@ -142,7 +145,7 @@ export function BookByForm(props: { request: RequestDto; lotId: number }) {
               why={whyNot(place, offer)}
               onClick={() => {
                 if (offer !== null) {
-                  setTaking({ act: 'book', offer });
+                  props.onTake({ act: 'book', offer });
                 }
               }}
             >
@@ -152,19 +155,6 @@ export function BookByForm(props: { request: RequestDto; lotId: number }) {
         </form>
         <Answer failure={refusalText(check.error)} reason={answer?.reason ?? null} offer={offer} />
       </TwoColumns>
-      {taking === null ? null : (
-        <SlotDialog
-          request={request}
-          lotId={lotId}
-          taking={taking}
-          onProposed={() => {
-            setTaking(null);
-          }}
-          onClose={() => {
-            setTaking(null);
-          }}
-        />
-      )}
     </Section>
   );
 }

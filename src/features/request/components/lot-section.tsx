@@ -1,5 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
-import type { ReactNode } from 'react';
+import { useState, type ReactNode } from 'react';
 import { Link } from 'react-router-dom';
 import type { LotDto, RequestDto } from '#shared/contracts/requests.contract.ts';
 import type { CheckCode } from '#shared/domain/checks/types.ts';
@@ -14,6 +14,7 @@ import { useTime } from '../use-time.ts';
 import { BookByForm } from './book-by-form.tsx';
 import { LotEstimate } from './lot-estimate.tsx';
 import { OffersSection } from './offers-section.tsx';
+import { SlotDialog, type Taking } from './slot-dialog.tsx';
 
 const words = t.request;
 
@@ -58,6 +59,13 @@ type LotSectionProps = {
 export function LotSection(props: LotSectionProps) {
   const { request, lot } = props;
   const site = useSite();
+  // Kept here, above what disappears as soon as somebody else has booked the lot.
+  const [taking, setTaking] = useState<Taking | null>(null);
+  const [isProposed, setIsProposed] = useState(false);
+  const take = (wish: Taking) => {
+    setIsProposed(false);
+    setTaking(wish);
+  };
   const isSearched = lotIsSearched(request, lot);
   const offers = useQuery({ ...offersQuery(site.code, request.id, lot.id), enabled: isSearched });
   const title = request.lots.length === 1 ? words.slots : words.slotsOfLot(words.lot(props.place));
@@ -78,10 +86,26 @@ export function LotSection(props: LotSectionProps) {
           request={request}
           offers={offers}
           title={title}
+          isProposed={isProposed}
+          onTake={take}
           onAskDeviation={props.onAskDeviation}
         />
       ) : null}
-      {isSearched && mayBook ? <BookByForm request={request} lotId={lot.id} /> : null}
+      {isSearched && mayBook ? <BookByForm request={request} lotId={lot.id} onTake={take} /> : null}
+      {taking === null ? null : (
+        <SlotDialog
+          request={request}
+          lotId={lot.id}
+          taking={taking}
+          onProposed={() => {
+            setTaking(null);
+            setIsProposed(true);
+          }}
+          onClose={() => {
+            setTaking(null);
+          }}
+        />
+      )}
     </>
   );
 }

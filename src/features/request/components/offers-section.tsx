@@ -13,7 +13,7 @@ import { tableError } from '#src/lib/table-error.ts';
 import { t } from '#src/texts/t.ts';
 import { isExpired, offerRows, shownAtFirst, slotAct } from '../offers.view.ts';
 import { OffersTable } from './offers-table.tsx';
-import { SlotDialog, type Taking } from './slot-dialog.tsx';
+import type { Taking } from './slot-dialog.tsx';
 
 const words = t.request;
 
@@ -39,7 +39,9 @@ type FoundProps = {
   found: OffersDto;
   receivedMs: number;
   isSearching: boolean;
+  isProposed: boolean;
   onAgain: () => void;
+  onTake: (taking: Taking) => void;
   onAskDeviation: ((code: CheckCode) => void) | undefined;
 };
 
@@ -48,8 +50,6 @@ function Found(props: FoundProps) {
   const may = useMay();
   const isOld = isExpired(found, props.receivedMs, useNow(15_000));
   const [count, setCount] = useState(shownAtFirst);
-  const [taking, setTaking] = useState<Taking | null>(null);
-  const [isProposed, setIsProposed] = useState(false);
   const act = slotAct(request.state, {
     mayConfirm: found.mayConfirm,
     mayPropose: may('request.propose', { ownerId: request.requester.id }),
@@ -57,7 +57,7 @@ function Found(props: FoundProps) {
   const rows = offerRows(found, count, request);
   return (
     <>
-      {isProposed ? (
+      {props.isProposed ? (
         <Notice kind="pass" role="status">
           {words.proposed}
         </Notice>
@@ -72,9 +72,8 @@ function Found(props: FoundProps) {
           why={isOld ? words.again : undefined}
           onAskDeviation={props.onAskDeviation}
           onTake={(offer) => {
-            setIsProposed(false);
             if (act !== null) {
-              setTaking({ act, offer, offeredAt: found.offeredAt });
+              props.onTake({ act, offer, offeredAt: found.offeredAt });
             }
           }}
         />
@@ -95,20 +94,6 @@ function Found(props: FoundProps) {
         </Button>
         {props.isSearching ? <span className="mp-note">{words.searching}</span> : null}
       </div>
-      {taking === null ? null : (
-        <SlotDialog
-          request={request}
-          lotId={found.lotId}
-          taking={taking}
-          onProposed={() => {
-            setTaking(null);
-            setIsProposed(true);
-          }}
-          onClose={() => {
-            setTaking(null);
-          }}
-        />
-      )}
     </>
   );
 }
@@ -118,6 +103,8 @@ export function OffersSection(props: {
   request: RequestDto;
   offers: UseQueryResult<OffersDto>;
   title: string;
+  isProposed: boolean;
+  onTake: (taking: Taking) => void;
   onAskDeviation: ((code: CheckCode) => void) | undefined;
 }) {
   const { offers } = props;
@@ -138,6 +125,8 @@ export function OffersSection(props: {
           found={found}
           receivedMs={offers.dataUpdatedAt}
           isSearching={offers.isFetching}
+          isProposed={props.isProposed}
+          onTake={props.onTake}
           onAskDeviation={props.onAskDeviation}
           onAgain={() => {
             void offers.refetch();

@@ -47,6 +47,11 @@ function Matter(props: { request: RequestDto }) {
           {request.declineReason}
         </Notice>
       )}
+      {request.withdrawReason === null ? null : (
+        <Notice kind="info" title={words.withdrawn}>
+          {request.withdrawReason}
+        </Notice>
+      )}
       {proposal === null ? null : (
         <Notice kind="info" title={words.proposal}>
           {words.proposalText(proposal.chamberTag, time(proposal.startAt), time(proposal.endAt))}
