@@ -17,6 +17,7 @@ import { boardEvents, placeInWindow, staffedRowKey } from '../board-events.view.
 import { boardLines, saidAbove, tideOf, type BoardLine } from '../board-rows.view.ts';
 import { nameBar, nextInRowMs } from '../board-bar.view.ts';
 import { wallClockMs, type BoardSpan } from '../board-window.view.ts';
+import { useReachableTimeline } from '../use-reachable-timeline.ts';
 import { BlockSentence } from './block-sentence.tsx';
 import { BoardBar } from './board-bar.tsx';
 import { BoardRowLabel } from './board-row-label.tsx';
@@ -72,7 +73,9 @@ function drawEvent(arg: EventContentArg, drawing: Drawing) {
     );
   }
   if (thing.kind === 'staffed') {
-    return null;
+    return arg.event.id === 'staffed-0' ? (
+      <span className="mp-board-axis-stop" role="img" aria-label={t.board.staffed} tabIndex={0} />
+    ) : null;
   }
   const line = drawing.lines.get(thing.rowKey);
   if (line?.kind !== 'tide') {
@@ -110,6 +113,7 @@ export function BoardTimeline(props: {
   const { currentYear } = siteCalendar(nowMs, site.zone);
   const [frame, frameWidth] = useElementWidth<HTMLDivElement>(1392);
   const labelWidth = frameWidth < 720 ? 108 : 184;
+  useReachableTimeline(frame);
   const slotCount = (span.dayCount * 24) / span.slotHours;
   const slotWidth = Math.max(
     Math.floor(Math.max(leastTimelineWidth, frameWidth - labelWidth - 1) / slotCount),
