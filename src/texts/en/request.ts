@@ -333,6 +333,7 @@ export const request = {
   refuse: 'Refuse it',
   answer: 'Answer',
   acceptance: 'How the customer agreed',
+  agreed: (how: string) => `Customer: ${how}`,
   acceptanceHelp: 'Needed for reported work.',
   expires: 'Until',
   expiresHelp: (zone: string) => `Leave empty for no end. Time in ${zone}.`,

@@ -180,6 +180,22 @@ function DecideDialog(props: {
   );
 }
 
+function Decision(props: { deviation: DeviationDto }) {
+  const { decidedBy, decisionReason, customerAcceptance } = props.deviation;
+  if (decidedBy === null) {
+    return words.none;
+  }
+  return (
+    <div>
+      {decidedBy}
+      {decisionReason === null ? null : <span className="mp-note block">{decisionReason}</span>}
+      {customerAcceptance === null ? null : (
+        <span className="mp-note block">{words.agreed(customerAcceptance)}</span>
+      )}
+    </div>
+  );
+}
+
 function DeviationTable(props: {
   rows: readonly DeviationDto[];
   query: { error: unknown; refetch: () => unknown; isPending: boolean };
@@ -212,7 +228,7 @@ function DeviationTable(props: {
         },
         { key: 'reason', head: heads.reason, cell: (row) => row.reason },
         { key: 'by', head: heads.by, cell: (row) => row.askedBy },
-        { key: 'decided', head: heads.decided, cell: (row) => row.decidedBy ?? words.none },
+        { key: 'decided', head: heads.decided, cell: (row) => <Decision deviation={row} /> },
         { key: 'until', head: heads.until, mono: true, cell: (row) => time(row.expiresAt) },
         {
           key: 'act',
