@@ -64,7 +64,8 @@ test('an engineer asks for eight 21700 cells, sees how long it takes, and propos
   await page.getByRole('heading', { level: 1, name: /^Request \d+$/ }).waitFor();
   requestPath = new URL(page.url()).pathname;
 
-  await page.getByRole('button', { name: 'Propose this' }).first().click();
+  await page.getByRole('button', { name: 'Ask for this' }).first().click();
+  await page.getByRole('dialog').getByRole('button', { name: 'Ask for this' }).click();
   await page.getByText('It reserves nothing; a scheduler books.').waitFor();
   await page.getByText('It is with the schedulers.').waitFor();
   await context.close();

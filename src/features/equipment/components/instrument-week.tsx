@@ -74,7 +74,8 @@ export function InstrumentWeek(props: { tag: string }) {
         </Button>
       </div>
       {failure === undefined ? null : <ErrorState {...failure} />}
-      <div className="mp-week">
+      {/* On a phone it scrolls sideways, which the keyboard must be able to do as well. */}
+      <div className="mp-week" role="region" aria-label={t.equipment.week} tabIndex={0}>
         <FullCalendar
           key={range.firstDay}
           plugins={[timeGridPlugin, luxonPlugin]}
